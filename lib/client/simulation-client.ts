@@ -1,0 +1,19 @@
+import type { Line } from "@/lib/line/types";
+import type { RunOptions, RunResult } from "@/lib/simulation/types";
+
+export type RunHooks = {
+  signal?: AbortSignal;
+  /** Called with merged finished blocks, at most about 10 times a second, never after the promise settled or the signal aborted. */
+  onProgress?(done: { replications: number; total: number; partial: RunResult | null }): void;
+};
+
+/** Lowest level of each week of every replication, warm-up weeks included: row-major by replication. */
+export type LowestLevels = { nReplications: number; nWeeks: number; lowest: Int32Array };
+
+/** The pool over the machine's cores. `run` rejects with AbortError on cancel and with an Error in plain words when a worker fails. */
+export interface SimulationClient {
+  readonly nWorkers: number;
+  run(line: Line, options: RunOptions, hooks?: RunHooks): Promise<RunResult>;
+  lowestLevels(line: Line, options: RunOptions, bufferId: string, hooks?: RunHooks): Promise<LowestLevels>;
+  close(): void;
+}
