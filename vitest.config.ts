@@ -11,7 +11,10 @@ export default defineConfig({
   test: {
     maxWorkers: 2,
     projects: [
-      { resolve: { alias }, test: { name: "unit", environment: "node", include: ["tests/unit/**/*.test.ts"], testTimeout: 60_000 } },
+      {
+        resolve: { alias },
+        test: { name: "unit", environment: "node", include: ["tests/unit/**/*.test.ts"], testTimeout: 60_000 },
+      },
       {
         resolve: { alias },
         plugins: [react()],
