@@ -3,6 +3,8 @@ import type { RunOptions, RunResult } from "@/lib/simulation/types";
 
 export type RunHooks = {
   signal?: AbortSignal;
+  /** Blocks of a live run wait while a full run has blocks to hand out. Default "full". */
+  priority?: "full" | "live";
   /** Called with merged finished blocks, at most about 10 times a second, never after the promise settled or the signal aborted. */
   onProgress?(done: { replications: number; total: number; partial: RunResult | null }): void;
 };
@@ -15,5 +17,6 @@ export interface SimulationClient {
   readonly nWorkers: number;
   run(line: Line, options: RunOptions, hooks?: RunHooks): Promise<RunResult>;
   lowestLevels(line: Line, options: RunOptions, bufferId: string, hooks?: RunHooks): Promise<LowestLevels>;
+  /** Stops the workers and rejects what is pending with AbortError; a later run starts new workers. */
   close(): void;
 }

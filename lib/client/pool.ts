@@ -1,0 +1,175 @@
+import { transfer } from "comlink";
+import type { Line } from "@/lib/line/types";
+import { checkOptions } from "@/lib/simulation/options";
+import type { RunOptions, RunResult } from "@/lib/simulation/types";
+import { listBuffers } from "@/workers/simulation-api";
+import { createBlockJob } from "./block-job";
+import { createCrew, type Call, type Job } from "./crew";
+import type { LowestLevels, RunHooks, SimulationClient } from "./simulation-client";
+import { startBrowserWorker, type WorkerHandle } from "./worker-handle";
+
+export type PoolSettings = { nWorkers?: number; startWorker?(): WorkerHandle; now?(): number };
+
+/** Shares of a run after which what is finished is merged for show. Each merge costs about one block. */
+const partialAt = [0.1, 0.3, 0.55, 0.8];
+const progressEveryMs = 100;
+const mostWorkers = 8;
+
+/**
+ * Starts no worker before the first run.
+ * @remarks Results do not depend on the number of workers, the size of the blocks or the order in which they finish.
+ */
+export function createSimulationClient(settings: PoolSettings = {}): SimulationClient {
+  const nWorkers = settings.nWorkers ?? Math.max(1, Math.min(navigator.hardwareConcurrency || 1, mostWorkers));
+  const now = settings.now ?? (() => performance.now());
+  const crew = createCrew(nWorkers, settings.startWorker ?? startBrowserWorker, now);
+  const pending = new Set<(error: Error) => void>();
+
+  function start<T>(
+    hooks: RunHooks,
+    build: (settle: { resolve(value: T): void; reject(error: Error): void }) => Job,
+  ): Promise<T> {
+    return new Promise<T>((resolve, reject) => {
+      if (hooks.signal?.aborted) return reject(abortError());
+      const end = (): void => {
+        crew.drop(job);
+        pending.delete(stop);
+        hooks.signal?.removeEventListener("abort", cancel);
+      };
+      const stop = (error: Error): void => {
+        end();
+        reject(error);
+      };
+      const cancel = (): void => stop(abortError());
+      const job = build({
+        resolve(value) {
+          end();
+          resolve(value);
+        },
+        reject: stop,
+      });
+      pending.add(stop);
+      hooks.signal?.addEventListener("abort", cancel, { once: true });
+      crew.add(job);
+    });
+  }
+
+  return {
+    nWorkers,
+    async run(line, options, hooks = {}) {
+      const checked = checkOptions(options);
+      return start<RunResult>(hooks, ({ resolve, reject }) => {
+        const report = createReporter(hooks, checked.replications, now);
+        const gather = createGathering(line, checked, Boolean(hooks.onProgress), report.take, resolve);
+        return createBlockJob<RunResult>({
+          line,
+          options: checked,
+          rank: hooks.priority === "live" ? 1 : 0,
+          nWorkers,
+          send: (api, part) => api.simulate(part),
+          onBlock(part, done) {
+            gather.add(part, done);
+            report.count(done);
+          },
+          aside: gather.next,
+          fail: reject,
+        });
+      });
+    },
+    async lowestLevels(line, options, bufferId, hooks = {}) {
+      const checked = checkOptions(options);
+      const base = checked.firstReplication ?? 0;
+      const nWeeks = checked.warmupWeeks + checked.weeks;
+      const lowest = new Int32Array(checked.replications * nWeeks);
+      return start<LowestLevels>(hooks, ({ resolve, reject }) => {
+        const report = createReporter(hooks, checked.replications, now);
+        return createBlockJob<{ first: number; levels: LowestLevels }>({
+          line,
+          options: checked,
+          rank: hooks.priority === "live" ? 1 : 0,
+          nWorkers,
+          async send(api, part) {
+            const answer = await api.lowestLevels(part, bufferId);
+            if (!answer.ok) return answer;
+            return { ...answer, value: { first: (part.firstReplication ?? 0) - base, levels: answer.value } };
+          },
+          onBlock({ first, levels }, done) {
+            lowest.set(levels.lowest, first * nWeeks);
+            report.count(done);
+            if (done === checked.replications) resolve({ nReplications: checked.replications, nWeeks, lowest });
+          },
+          fail: reject,
+        });
+      });
+    },
+    close() {
+      for (const stop of [...pending]) stop(abortError());
+      crew.close();
+    },
+  };
+}
+
+/** Collects the parts of a run and has them merged by a worker, so that the page never stands still for it. */
+function createGathering(
+  line: Line,
+  { replications: total }: RunOptions,
+  showsPartials: boolean,
+  onPartial: (partial: RunResult) => void,
+  onWhole: (result: RunResult) => void,
+) {
+  const parts: RunResult[] = [];
+  const marks = showsPartials && total >= 20 ? partialAt.map((share) => Math.ceil(share * total)) : [];
+  let done = 0;
+  let isMerging = false;
+  let isClosing = false;
+  return {
+    add(part: RunResult, nDone: number): void {
+      parts.push(part);
+      done = nDone;
+    },
+    next(): Call | null {
+      if (isMerging) return null;
+      if (done === total && !isClosing) {
+        isClosing = true;
+        return {
+          line,
+          expectedMs: null,
+          send: (api) => api.merge(transfer(parts, parts.flatMap(listBuffers))),
+          receive: (value) => onWhole(value as RunResult),
+        };
+      }
+      if (isClosing || !(done >= marks[0])) return null;
+      while (done >= marks[0]) marks.shift();
+      isMerging = true;
+      return {
+        line,
+        expectedMs: null,
+        send: (api) => api.merge([...parts]),
+        receive(value) {
+          isMerging = false;
+          onPartial(value as RunResult);
+        },
+      };
+    },
+  };
+}
+
+/** Tells the page how far a run is, at most ten times a second and not before the first block. */
+function createReporter(hooks: RunHooks, total: number, now: () => number) {
+  let partial: RunResult | null = null;
+  let last = -Infinity;
+  return {
+    take(value: RunResult): void {
+      partial = value;
+    },
+    count(done: number): void {
+      if (!hooks.onProgress || now() - last < progressEveryMs) return;
+      last = now();
+      hooks.onProgress({ replications: done, total, partial });
+    },
+  };
+}
+
+function abortError(): DOMException {
+  return new DOMException("The run was cancelled.", "AbortError");
+}

@@ -1,0 +1,4 @@
+import { expose } from "comlink";
+import { createSimulationApi } from "./simulation-api";
+
+expose(createSimulationApi(() => performance.now()));
