@@ -24,6 +24,8 @@ export type LineState = {
   line: LineDetail;
   scenario: ScenarioDetail;
   selectScenario(id: string): void;
+  /** True while another scenario has been picked and is being read; the one before stays on screen. */
+  isSwitching: boolean;
   mayEdit: boolean;
   mayShare: boolean;
 
@@ -59,6 +61,10 @@ export type LineState = {
 
   keep(): Promise<ActionResult<unknown>>;
   saveAsScenario(name: string, document?: DraftLine, reading?: Reading): Promise<ActionResult<{ scenarioId: string }>>;
+  renameScenario(name: string): Promise<ActionResult<unknown>>;
+  markBase(): Promise<ActionResult<unknown>>;
+  /** Deletes the scenario on screen and goes to the base; refused for the base itself. */
+  deleteScenario(): Promise<ActionResult<unknown>>;
   /** Brings the draft back to the last kept version; undo restores it. */
   revert(): void;
 
