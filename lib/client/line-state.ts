@@ -3,7 +3,7 @@ import type { Caution } from "@/lib/line/cautions";
 import type { Edit } from "@/lib/line/edits";
 import type { DraftLine, Fault, Layout, Line, Note } from "@/lib/line/types";
 import type { ActionResult } from "@/lib/errors";
-import type { Draft, LineDetail, ReadingSummary, ScenarioDetail, ScenarioOptions } from "@/lib/schema/lines";
+import type { Draft, LineDetail, ReadingSummary, ScenarioDetail, ScenarioOptions, VersionDetail } from "@/lib/schema/lines";
 import type { RunResult } from "@/lib/simulation/types";
 
 /** "stale": somebody else saved first; `theirs` holds their draft until the user chooses. */
@@ -67,6 +67,8 @@ export type LineState = {
   deleteScenario(): Promise<ActionResult<unknown>>;
   /** Brings the draft back to the last kept version; undo restores it. */
   revert(): void;
+  /** Brings document, layout, notes and options of a kept version into the draft as one edit. */
+  bringBack(version: VersionDetail): void;
 
   /** Ids of the selected nodes and "from>to" keys of selected links. */
   selection: readonly string[];

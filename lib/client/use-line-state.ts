@@ -6,7 +6,7 @@ import { differences } from "@/lib/line/diff";
 import type { Edit } from "@/lib/line/edits";
 import { digestLine, parseLine } from "@/lib/line";
 import type { DraftLine } from "@/lib/line/types";
-import type { LineDetail, ScenarioDetail, ScenarioOptions } from "@/lib/schema/lines";
+import type { LineDetail, ScenarioDetail, ScenarioOptions, VersionDetail } from "@/lib/schema/lines";
 import { can } from "@/lib/schema/roles";
 import { snapshotOf } from "./draft-sheet";
 import type { LineActions } from "./line-actions";
@@ -70,8 +70,13 @@ export function useLineState({ line, scenario, isSwitching, select, actions }: S
       }),
     [sheet],
   );
+  const bringBack = useCallback(
+    (version: VersionDetail) =>
+      sheet.change({ label: `Bring back version ${version.number}`, apply: () => snapshotOf(version) }),
+    [sheet],
+  );
   const revert = useCallback(
-    () => sheet.change({ label: `Revert to kept version ${kept.number}`, apply: () => snapshotOf(kept) }),
+    () => sheet.change({ label: `Revert to version ${kept.number}`, apply: () => snapshotOf(kept) }),
     [sheet, kept],
   );
 
@@ -105,6 +110,7 @@ export function useLineState({ line, scenario, isSwitching, select, actions }: S
     markBase: done.markBase,
     deleteScenario: done.deleteScenario,
     revert,
+    bringBack,
     selection,
     select: setSelection,
     full: run.full,

@@ -1,0 +1,111 @@
+"use client";
+
+import { FillRateRuler } from "@/components/charts/fill-rate-ruler";
+import { useLine } from "@/lib/client/line-state";
+import { formatMoney } from "@/lib/format";
+import type { Figure } from "@/lib/simulation/types";
+import type { StripFigures, StripReading } from "./strip-reading";
+
+const cell = "hidden border-l border-rule px-3 pt-[11px] pb-2.5 lg:block min-[1380px]:px-4";
+
+/** The ruler, capital tied up and cost a year: of the settled reading, with what the edit would change. */
+export function ResultStripFigures({ reading: { settled, live } }: { reading: StripReading }) {
+  const { document } = useLine();
+  const figures = settled ?? live;
+  const edited = settled ? live : null;
+  const { currency } = document.money;
+  return (
+    <>
+      <div className={cell}>
+        {figures ? <Ruler figures={figures} edited={edited} isLive={!settled} /> : <Missing label="Weekly fill rate" />}
+      </div>
+      <Money
+        label="Capital tied up"
+        figure={figures?.moneyTiedUp}
+        edited={edited?.moneyTiedUp}
+        isLive={!settled}
+        currency={currency}
+      />
+      <Money
+        label="Cost a year"
+        figure={figures?.costPerYear}
+        edited={edited?.costPerYear}
+        isLive={!settled}
+        currency={currency}
+      />
+    </>
+  );
+}
+
+function Ruler({ figures, edited, isLive }: { figures: StripFigures; edited: StripFigures | null; isLive: boolean }) {
+  const { acceptedRisk, p05, p50, atRisk } = figures;
+  const points = (figure: Figure): string => (figure.value * 100).toFixed(1);
+  const names = [
+    { name: "P5", figure: p05 },
+    { name: `P${Math.round(acceptedRisk * 1000) / 10}`, figure: atRisk },
+    { name: "P50", figure: p50 },
+  ].filter(({ name }, i, all) => all.findIndex((other) => other.name === name) === i);
+  return (
+    <>
+      <p className="flex justify-between gap-2 text-s whitespace-nowrap text-ink-2">
+        <span>
+          <span className="hidden min-[1380px]:inline">Weekly fill rate</span>
+          <span className="min-[1380px]:hidden">Fill rate</span>
+        </span>
+        <span>
+          {names.map(({ name, figure }, i) => (
+            <span key={name}>
+              {i > 0 && " · "}
+              <b className="font-semibold">{name}</b> {points(figure)}
+            </span>
+          ))}
+        </span>
+      </p>
+      <div className="mt-2.5">
+        <FillRateRuler
+          p05={p05.value}
+          atRisk={atRisk}
+          p50={p50.value}
+          acceptedRisk={acceptedRisk}
+          live={edited?.atRisk ?? null}
+          isLive={isLive}
+        />
+      </div>
+    </>
+  );
+}
+
+type MoneyProps = { label: string; figure?: Figure; edited?: Figure; isLive: boolean; currency: string };
+
+function Money({ label, figure, edited, isLive, currency }: MoneyProps) {
+  if (!figure) {
+    return (
+      <div className={cell}>
+        <Missing label={label} />
+      </div>
+    );
+  }
+  const difference = edited && Math.round((edited.value - figure.value) / 100) * 100;
+  return (
+    <div className={cell}>
+      <p className="mb-[3px] text-s text-ink-2">{label}</p>
+      <p className="text-[17px]/6 font-[620] tracking-[-.01em] whitespace-nowrap min-[1380px]:text-xl">
+        <span className="text-[13px] font-normal text-ink-3">{currency}</span> {formatMoney(figure.value)}
+      </p>
+      <p className="text-s whitespace-nowrap text-water-700">
+        {isLive ? "about, live" : difference ? `${formatMoney(difference)} if kept` : edited && "about the same if kept"}
+      </p>
+    </div>
+  );
+}
+
+function Missing({ label }: { label: string }) {
+  return (
+    <>
+      <p className="mb-[3px] text-s text-ink-2">{label}</p>
+      <p className="text-xl text-ink-3" aria-label="not run yet">
+        –
+      </p>
+    </>
+  );
+}

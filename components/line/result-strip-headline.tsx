@@ -1,0 +1,155 @@
+"use client";
+
+import { useLine } from "@/lib/client/line-state";
+import { formatPercent } from "@/lib/format";
+import { figuresOf, type StripReading } from "./strip-reading";
+import { announce, describeFaults, describePoints, describeSource, describeWeeks, sayFigures } from "./strip-text";
+
+/** The sentence first: what is shipped in so many weeks of ten, and what the last edit does to it. */
+export function ResultStripHeadline({ reading }: { reading: StripReading }) {
+  const line = useLine();
+  return (
+    <div className="min-w-0 px-3 pt-2 pb-1.5 sm:px-5 lg:pt-[11px] lg:pb-2.5">
+      <Sentence reading={reading} />
+      <p role="status" className="sr-only">
+        {announce(line)}
+      </p>
+    </div>
+  );
+}
+
+function Sentence({ reading: { settled, live } }: { reading: StripReading }) {
+  const { scenario, progress, faults, isLiveRunning, options } = useLine();
+  const risk = `accepted risk ${formatPercent(options.acceptedRisk, 0)}`;
+  if (progress) return <Running risk={risk} />;
+  if (settled) {
+    const points = describePoints(settled.atRisk);
+    return (
+      <>
+        <Caption parts={[describeSource(scenario.name, settled.of), risk, points && `${points} points`]} />
+        <Say {...sayFigures(settled)} />
+        <Second live={live} of={settled.of} />
+      </>
+    );
+  }
+  if (live && faults.length === 0) {
+    const points = describePoints(live.atRisk);
+    return (
+      <>
+        <Caption parts={[scenario.name, `live reading, ${describeWeeks(live.weeks)}`, risk, points && `${points} points`]} />
+        <Say {...sayFigures(live, true)} />
+        <Second live={null} of={null} />
+      </>
+    );
+  }
+  return (
+    <>
+      <Caption parts={[scenario.name, risk]} />
+      <p className={say}>{faults.length > 0 ? "This line cannot run yet." : "Not run yet."}</p>
+      {isLiveRunning ? <Pulse text="Taking a first reading" /> : <Second live={null} of={null} />}
+    </>
+  );
+}
+
+function Running({ risk }: { risk: string }) {
+  const { progress, options, scenario } = useLine();
+  if (!progress) return null;
+  const { partial, doneWeeks, totalWeeks } = progress;
+  const figures = partial && figuresOf({ result: partial }, options.acceptedRisk);
+  const share = doneWeeks / totalWeeks;
+  const said = figures && sayFigures(figures);
+  return (
+    <>
+      <Caption parts={[`Running: ${scenario.name}`, risk]} />
+      <p className={say}>
+        {said && figures ? (
+          <>
+            So far, {said.before.charAt(0).toLowerCase() + said.before.slice(1)} <b className="font-bold">{said.value}</b>{" "}
+            <span className="text-l">{describePoints(figures.atRisk)}</span>
+          </>
+        ) : (
+          "So far too few weeks to read."
+        )}
+      </p>
+      <div
+        role="progressbar"
+        aria-label="Weeks simulated"
+        aria-valuemin={0}
+        aria-valuemax={100}
+        aria-valuenow={Math.round(share * 100)}
+        className="relative mt-2 h-2.5 border border-rule-2 bg-sunk"
+      >
+        <i
+          className="absolute inset-y-0 left-0 border-r-2 border-water-700 bg-[repeating-linear-gradient(0deg,var(--water-400)_0_2px,var(--water-200)_2px_4px)]"
+          style={{ width: `${share * 100}%` }}
+        />
+      </div>
+    </>
+  );
+}
+
+/** The line below the sentence: trouble first, then what the edit does. */
+function Second({ live, of }: { live: StripReading["live"]; of: NonNullable<StripReading["settled"]>["of"] | null }) {
+  const { faults, runError, isLiveRunning, select } = useLine();
+  if (runError) return <p className="mt-1 border-l-[3px] border-silt-600 pl-2 text-m text-silt-700">{runError}</p>;
+  if (faults.length > 0) {
+    const [{ message, node }] = faults;
+    return (
+      <p className="mt-1 flex min-w-0 gap-1.5 text-m text-silt-700">
+        <b className="font-[620] whitespace-nowrap">Cannot run: {describeFaults(faults.length)}.</b>
+        {node ? (
+          <button type="button" className="truncate text-left underline underline-offset-3" onClick={() => select([node])}>
+            {message}
+          </button>
+        ) : (
+          <span className="truncate">{message}</span>
+        )}
+      </p>
+    );
+  }
+  if (of === "now") return null;
+  if (of === null) return <p className="mt-1 text-m text-ink-2">Not run in full yet.</p>;
+  if (!live) return isLiveRunning ? <Pulse text="Reading your edit" /> : null;
+  return (
+    <p className="mt-[3px] flex flex-wrap items-baseline gap-x-1.5 text-[15px]/5">
+      <Ring isMoving={isLiveRunning} />
+      <b className="font-bold text-water-700">With your edit, about {formatPercent(live.atRisk.value, 1)}</b>
+      <span>{describePoints(live.atRisk)}</span>
+      <span className="ml-0.5 text-s text-ink-3">
+        {isLiveRunning ? "reading again" : `live reading, ${describeWeeks(live.weeks)}`}
+      </span>
+    </p>
+  );
+}
+
+const say = "text-l font-[330] tracking-[-.015em] text-balance lg:text-[21px]/7 min-[1380px]:text-2xl";
+
+function Say({ before, value, after }: { before: string; value: string; after: string }) {
+  return (
+    <p className={say}>
+      {before} <b className="font-bold whitespace-nowrap">{value}</b> {after}
+    </p>
+  );
+}
+
+function Caption({ parts }: { parts: (string | null)[] }) {
+  return <p className="mb-[3px] truncate text-s text-ink-2">{parts.filter(Boolean).join(" · ")}</p>;
+}
+
+function Pulse({ text }: { text: string }) {
+  return (
+    <p className="mt-[3px] flex items-baseline gap-1.5 text-m text-ink-2">
+      <Ring isMoving />
+      {text}
+    </p>
+  );
+}
+
+function Ring({ isMoving }: { isMoving: boolean }) {
+  return (
+    <span
+      aria-hidden
+      className={`size-[9px] shrink-0 self-center rounded-full border-2 border-water-600 ${isMoving ? "motion-safe:animate-pulse" : ""}`}
+    />
+  );
+}
