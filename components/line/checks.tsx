@@ -11,9 +11,10 @@ export function Checks() {
   const nothing = faults.length + cautions.length === 0;
   const text = `Checked: ${count(faults.length, "fault")}, ${count(cautions.length, "caution")}`;
   if (nothing) return <span className="text-s whitespace-nowrap text-ink-3">{text}</span>;
-  const faultItems = faults.map(
-    ({ message, node, link }): Item => ({ message, ids: node ? [node] : link ? [`${link.from}>${link.to}`] : [] }),
-  );
+  const faultItems = faults.map(({ message, node, link }): Item => ({
+    message,
+    ids: node ? [node] : link ? [`${link.from}>${link.to}`] : [],
+  }));
   const cautionItems = cautions.map(({ message, node }): Item => ({ message, ids: node ? [node] : [] }));
   return (
     <Popover.Root>
@@ -32,7 +33,12 @@ export function Checks() {
           aria-label="Faults and cautions"
           className="z-40 max-h-[60dvh] w-96 max-w-[calc(100vw-16px)] overflow-auto border-[1.5px] border-ink bg-sheet p-4 shadow-sheet"
         >
-          <List title="Faults: the line cannot run before they are put right" items={faultItems} isFault onPick={select} />
+          <List
+            title="Faults: the line cannot run before they are put right"
+            items={faultItems}
+            isFault
+            onPick={select}
+          />
           <List title="Cautions: it runs, but look at these" items={cautionItems} onPick={select} />
         </Popover.Content>
       </Popover.Portal>

@@ -59,7 +59,10 @@ function SaveAsDialog({ isOpen, onClose }: { isOpen: boolean; onClose(): void })
       title="Save as a scenario of its own?"
       intro={`What is on screen becomes a new scenario beside ${scenario.name}, whose draft stays as it is.`}
       action="Save as scenario"
-      initialName={freeName(scenario.name, line.scenarios.map(({ name }) => name))}
+      initialName={freeName(
+        scenario.name,
+        line.scenarios.map(({ name }) => name),
+      )}
       isOpen={isOpen}
       onClose={onClose}
       submit={async (name) => {

@@ -93,7 +93,11 @@ function Money({ label, figure, edited, isLive, currency }: MoneyProps) {
         <span className="text-[13px] font-normal text-ink-3">{currency}</span> {formatMoney(figure.value)}
       </p>
       <p className="text-s whitespace-nowrap text-water-700">
-        {isLive ? "about, live" : difference ? `${formatMoney(difference)} if kept` : edited && "about the same if kept"}
+        {isLive
+          ? "about, live"
+          : difference
+            ? `${formatMoney(difference)} if kept`
+            : edited && "about the same if kept"}
       </p>
     </div>
   );

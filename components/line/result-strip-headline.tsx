@@ -36,7 +36,9 @@ function Sentence({ reading: { settled, live } }: { reading: StripReading }) {
     const points = describePoints(live.atRisk);
     return (
       <>
-        <Caption parts={[scenario.name, `live reading, ${describeWeeks(live.weeks)}`, risk, points && `${points} points`]} />
+        <Caption
+          parts={[scenario.name, `live reading, ${describeWeeks(live.weeks)}`, risk, points && `${points} points`]}
+        />
         <Say {...sayFigures(live, true)} />
         <Second live={null} of={null} />
       </>
@@ -64,8 +66,8 @@ function Running({ risk }: { risk: string }) {
       <p className={say}>
         {said && figures ? (
           <>
-            So far, {said.before.charAt(0).toLowerCase() + said.before.slice(1)} <b className="font-bold">{said.value}</b>{" "}
-            <span className="text-l">{describePoints(figures.atRisk)}</span>
+            So far, {said.before.charAt(0).toLowerCase() + said.before.slice(1)}{" "}
+            <b className="font-bold">{said.value}</b> <span className="text-l">{describePoints(figures.atRisk)}</span>
           </>
         ) : (
           "So far too few weeks to read."
@@ -98,7 +100,11 @@ function Second({ live, of }: { live: StripReading["live"]; of: NonNullable<Stri
       <p className="mt-1 flex min-w-0 gap-1.5 text-m text-silt-700">
         <b className="font-[620] whitespace-nowrap">Cannot run: {describeFaults(faults.length)}.</b>
         {node ? (
-          <button type="button" className="truncate text-left underline underline-offset-3" onClick={() => select([node])}>
+          <button
+            type="button"
+            className="truncate text-left underline underline-offset-3"
+            onClick={() => select([node])}
+          >
             {message}
           </button>
         ) : (

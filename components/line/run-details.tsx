@@ -79,7 +79,9 @@ export function RunDetails() {
   const { options, setOptions, mayEdit } = useLine();
   return (
     <Popover.Root>
-      <Popover.Trigger className="text-water-700 underline underline-offset-3 hover:decoration-2">Details</Popover.Trigger>
+      <Popover.Trigger className="text-water-700 underline underline-offset-3 hover:decoration-2">
+        Details
+      </Popover.Trigger>
       <Popover.Portal>
         <Popover.Content
           side="top"
@@ -106,7 +108,8 @@ export function RunDetails() {
                     const changed = read(text);
                     const next = ScenarioOptions.safeParse({ ...options, ...changed });
                     if (!changed || !next.success) return range;
-                    if (!isRunSizeAllowed(next.data)) return "At most 1\u202f000\u202f000 weeks in all, warm-up included.";
+                    if (!isRunSizeAllowed(next.data))
+                      return "At most 1\u202f000\u202f000 weeks in all, warm-up included.";
                     setOptions(changed);
                     return null;
                   }}

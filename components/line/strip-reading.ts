@@ -57,6 +57,14 @@ function readAtRisk(result: RunResult, acceptedRisk: number): Figure {
   return acceptedRisk === 0.1 ? result.summary.p10 : percentile(result, acceptedRisk);
 }
 
-function figuresOfSummary({ acceptedRisk, atRisk, p05, p50, moneyTiedUp, costPerYear, weeks }: ReadingSummary): StripFigures {
+function figuresOfSummary({
+  acceptedRisk,
+  atRisk,
+  p05,
+  p50,
+  moneyTiedUp,
+  costPerYear,
+  weeks,
+}: ReadingSummary): StripFigures {
   return { acceptedRisk, atRisk, p05, p50, moneyTiedUp, costPerYear, weeks };
 }

@@ -16,7 +16,9 @@ export function VersionsDialog({ isOpen, onClose, onTake }: Props) {
       onOpenChange={(open) => !open && onClose()}
       title={`Kept versions of ${scenario.name}`}
       description={
-        mayEdit ? "A version that is brought back replaces the draft; Undo restores it. Kept versions never change." : undefined
+        mayEdit
+          ? "A version that is brought back replaces the draft; Undo restores it. Kept versions never change."
+          : undefined
       }
     >
       <table className="mt-4 w-full text-m">

@@ -3,7 +3,14 @@ import type { Caution } from "@/lib/line/cautions";
 import type { Edit } from "@/lib/line/edits";
 import type { DraftLine, Fault, Layout, Line, Note } from "@/lib/line/types";
 import type { ActionResult } from "@/lib/errors";
-import type { Draft, LineDetail, ReadingSummary, ScenarioDetail, ScenarioOptions, VersionDetail } from "@/lib/schema/lines";
+import type {
+  Draft,
+  LineDetail,
+  ReadingSummary,
+  ScenarioDetail,
+  ScenarioOptions,
+  VersionDetail,
+} from "@/lib/schema/lines";
 import type { RunResult } from "@/lib/simulation/types";
 
 /** "stale": somebody else saved first; `theirs` holds their draft until the user chooses. */
