@@ -10,12 +10,7 @@ export function useDraft(scenario: ScenarioDetail, mayEdit: boolean): { sheet: D
   const [sheets] = useState(() => new Map<string, DraftSheet>());
   let sheet = sheets.get(scenario.id);
   if (!sheet) {
-    sheet = createDraftSheet({
-      draft: scenario.draft,
-      mayEdit,
-      put: (draft, isLeaving) => putDraft(scenario.id, draft, isLeaving),
-      now: () => performance.now(),
-    });
+    sheet = openSheet(scenario, mayEdit);
     sheets.set(scenario.id, sheet);
   }
   const view = useSyncExternalStore(sheet.subscribe, sheet.getView, sheet.getView);
@@ -44,4 +39,13 @@ export function useDraft(scenario: ScenarioDetail, mayEdit: boolean): { sheet: D
   }, [sheets]);
 
   return { sheet, view };
+}
+
+function openSheet({ id, draft }: ScenarioDetail, mayEdit: boolean): DraftSheet {
+  return createDraftSheet({
+    draft,
+    mayEdit,
+    put: (edited, isLeaving) => putDraft(id, edited, isLeaving),
+    now: () => performance.now(),
+  });
 }
