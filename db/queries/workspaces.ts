@@ -38,10 +38,7 @@ export async function findFirstMembership(db: Db, userId: string): Promise<Membe
 
 /** Name of a workspace that the caller is known to be a member of. */
 export async function getWorkspaceName(db: Db, workspaceId: string): Promise<string> {
-  const [row] = await db
-    .select({ name: organization.name })
-    .from(organization)
-    .where(eq(organization.id, workspaceId));
+  const [row] = await db.select({ name: organization.name }).from(organization).where(eq(organization.id, workspaceId));
   if (!row) throw new AppError("not-found", "This workspace does not exist.");
   return row.name;
 }

@@ -4,7 +4,10 @@ import type { Figure } from "@/lib/simulation/types";
 import { idColumn, instantColumn, personColumn, workspaceColumn } from "./columns";
 import { line } from "./line";
 
-export type StoredFigures = Pick<ReadingSummary, "p05" | "p10" | "p50" | "risk" | "moneyTiedUp" | "costPerYear" | "weeks">;
+export type StoredFigures = Pick<
+  ReadingSummary,
+  "p05" | "p10" | "p50" | "risk" | "moneyTiedUp" | "costPerYear" | "weeks"
+>;
 
 /** What is known of a result without reading its bytes. One row for each document, run options and engine of a line. */
 export const result = pgTable(

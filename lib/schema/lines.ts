@@ -4,14 +4,19 @@ import type { Figure } from "@/lib/simulation/types";
 import type { Role } from "./roles";
 
 /** How a scenario is run; kept with it. Defaults: 200 x 50 weeks, 12 warm-up, target 95 %, accepted risk 10 %, seed phrase "1". */
-export const ScenarioOptions = z.object({
-  replications: z.int().min(1).max(20_000),
-  weeks: z.int().min(1).max(5_000),
-  warmupWeeks: z.int().min(0).max(5_000),
-  targetFillRate: z.number().min(0).max(1),
-  acceptedRisk: z.number().gt(0).lt(1),
-  seed: z.string().min(1).max(200),
-});
+export const ScenarioOptions = z
+  .object({
+    replications: z.int().min(1).max(20_000),
+    weeks: z.int().min(1).max(5_000),
+    warmupWeeks: z.int().min(0).max(5_000),
+    targetFillRate: z.number().min(0).max(1),
+    acceptedRisk: z.number().gt(0).lt(1),
+    seed: z.string().min(1).max(200),
+  })
+  .refine(({ replications, weeks, warmupWeeks }) => replications * (weeks + warmupWeeks) <= 1_000_000, {
+    path: ["replications"],
+    message: "Replications times weeks, warm-up included, may be at most 1\u202f000\u202f000.",
+  });
 export type ScenarioOptions = z.infer<typeof ScenarioOptions>;
 
 export const defaultOptions: ScenarioOptions = {

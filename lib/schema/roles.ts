@@ -2,7 +2,17 @@ export const roleNames = ["owner", "engineer", "manager", "viewer"] as const;
 export type Role = (typeof roleNames)[number];
 
 /** What a member may do; the table of rights is `rightsOf`. */
-export const rightNames = ["read", "comment", "edit", "share", "deleteLine", "putForward", "decide", "manageMembers", "exportLog"] as const;
+export const rightNames = [
+  "read",
+  "comment",
+  "edit",
+  "share",
+  "deleteLine",
+  "putForward",
+  "decide",
+  "manageMembers",
+  "exportLog",
+] as const;
 export type Right = (typeof rightNames)[number];
 
 const rights: Record<Role, readonly Right[]> = {
