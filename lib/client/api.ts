@@ -38,8 +38,8 @@ export async function putDraft(scenarioId: string, draft: DraftToSave, isLeaving
     keepalive: isLeaving,
   });
   if (response.status === 409) {
-    const { current, differs } = (await response.json()) as { current: Draft; differs: string[] };
-    return { status: "stale", current, differs };
+    const { current, differs } = (await response.clone().json()) as { current?: Draft; differs?: string[] };
+    if (current) return { status: "stale", current, differs: differs ?? [] };
   }
   if (!response.ok) throw await readFailure(response);
   return {
