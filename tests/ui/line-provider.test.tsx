@@ -1,0 +1,262 @@
+import { act, screen, waitFor } from "@testing-library/react";
+import userEvent from "@testing-library/user-event";
+import { beforeEach, describe, expect, it, vi } from "vitest";
+import { useLine, type LineState } from "@/lib/client/line-state";
+import type { Edit } from "@/lib/line/edits";
+import { encodeResult, simulate } from "@/lib/simulation";
+import type { Line } from "@/lib/line/types";
+import {
+  createActions,
+  createClient,
+  createDraft,
+  createRoutes,
+  createScenario,
+  exampleDocument,
+  renderLine,
+  serve,
+  smallOptions,
+} from "./line-harness";
+
+const address = vi.hoisted(() => ({ search: "", push: vi.fn() }));
+vi.mock("next/navigation", () => ({
+  usePathname: () => "/lines/l-1/sketch",
+  useRouter: () => ({ push: address.push }),
+  useSearchParams: () => new URLSearchParams(address.search),
+}));
+
+let line: LineState;
+function Probe() {
+  line = useLine();
+  return (
+    <>
+      <output>{line.document.name}</output>
+      <input aria-label="Some field" />
+    </>
+  );
+}
+
+const rename = (name: string): Edit => ({
+  label: `Rename to ${name}`,
+  apply: (state) => ({ ...state, document: { ...state.document, name } }),
+});
+const pause = (ms: number) => act(() => new Promise((resolve) => setTimeout(resolve, ms)));
+
+beforeEach(() => {
+  address.search = "";
+  address.push.mockReset();
+});
+
+describe("LineProvider", () => {
+  it("reads the document: faults, digest, what is not kept", async () => {
+    serve(createRoutes("engineer", [createScenario()]));
+    renderLine({ children: <Probe /> });
+    expect(line).toMatchObject({ faults: [], nEditsNotKept: 0, canUndo: false, mayEdit: true });
+    expect(line.digest).toMatch(/^[0-9a-f]{64}$/);
+    act(() =>
+      line.apply({
+        label: "Empty it",
+        apply: (state) => ({ ...state, document: { ...state.document, nodes: [], links: [] } }),
+      }),
+    );
+    expect(line.parsed).toBeNull();
+    expect(line.faults.length).toBeGreaterThan(0);
+    expect(line.nEditsNotKept).toBeGreaterThan(0);
+  });
+
+  it("undoes and redoes with the keys, but not while typing in a field", async () => {
+    serve(createRoutes("engineer", [createScenario()]));
+    const user = userEvent.setup();
+    renderLine({ children: <Probe /> });
+    act(() => line.apply(rename("Drive unit line, two shifts")));
+    await user.click(screen.getByLabelText("Some field"));
+    await user.keyboard("{Control>}z{/Control}");
+    expect(line.document.name).toBe("Drive unit line, two shifts");
+    act(() => (document.activeElement as HTMLElement).blur());
+    await user.keyboard("{Control>}z{/Control}");
+    expect(line).toMatchObject({ canUndo: false, canRedo: true, redoLabel: "Rename to Drive unit line, two shifts" });
+    expect(line.document.name).toBe("Drive unit line");
+    await user.keyboard("{Control>}y{/Control}");
+    expect(line.document.name).toBe("Drive unit line, two shifts");
+  });
+
+  it("saves an edit soon after it, and says when it was saved", async () => {
+    const asked = serve(createRoutes("engineer", [createScenario()]));
+    renderLine({ children: <Probe /> });
+    act(() => line.apply(rename("Edited")));
+    expect(line.saveState.status).toBe("waiting");
+    await waitFor(() => expect(line.saveState.status).toBe("saved"), { timeout: 3_000 });
+    const saves = asked.filter(({ route }) => route.startsWith("PUT"));
+    expect(saves).toHaveLength(1);
+    expect(JSON.parse(String(saves[0].init?.body))).toMatchObject({ revision: 1, document: { name: "Edited" } });
+  });
+
+  it("changes and saves nothing for a viewer, who may still run", async () => {
+    const asked = serve(createRoutes("viewer", [createScenario()]));
+    renderLine({ role: "viewer", children: <Probe /> });
+    act(() => line.apply(rename("Edited")));
+    act(() => line.runFull());
+    await waitFor(() => expect(line.full?.isCurrent).toBe(true));
+    await pause(700);
+    expect(line.document.name).toBe("Drive unit line");
+    expect(asked.filter(({ route }) => !route.startsWith("GET"))).toEqual([]);
+  });
+
+  it("saves before it keeps, and keeps that revision", async () => {
+    const asked = serve(createRoutes("engineer", [createScenario()]));
+    const actions = createActions();
+    renderLine({ actions, children: <Probe /> });
+    act(() => line.apply(rename("Edited")));
+    const kept = await act(() => line.keep());
+    expect(kept.ok).toBe(true);
+    expect(asked.filter(({ route }) => route.startsWith("PUT"))).toHaveLength(1);
+    expect(actions.keepVersion).toHaveBeenCalledWith({ scenarioId: "s-base", revision: 2 });
+  });
+
+  it("keeps nothing while the draft cannot be saved", async () => {
+    serve({
+      ...createRoutes("engineer", [createScenario()]),
+      "PUT /api/scenarios/s-base/draft": () => Promise.reject(new TypeError("Failed to fetch")),
+    });
+    const actions = createActions();
+    renderLine({ actions, children: <Probe /> });
+    act(() => line.apply(rename("Edited")));
+    const kept = await act(() => line.keep());
+    expect(kept).toMatchObject({ ok: false, code: "conflict" });
+    expect(actions.keepVersion).not.toHaveBeenCalled();
+  });
+
+  it("reverts to the kept version as one edit that can be undone", () => {
+    const draft = createDraft({ document: { ...exampleDocument, name: "Edited" } });
+    const scenario = createScenario({ draft });
+    serve(createRoutes("engineer", [scenario]));
+    renderLine({ scenarios: [scenario], children: <Probe /> });
+    act(() => line.revert());
+    expect(line).toMatchObject({ nEditsNotKept: 0, undoLabel: "Revert to version 1" });
+    act(() => line.undo());
+    expect(line.document.name).toBe("Edited");
+  });
+
+  it("takes a live reading after an edit, and none while a full run says the same", async () => {
+    serve(createRoutes("engineer", [createScenario()]));
+    renderLine({ children: <Probe /> });
+    await waitFor(() => expect(line.live).not.toBeNull());
+    expect(line.live?.digest).toBe(line.digest);
+    act(() => line.runFull());
+    await waitFor(() => expect(line.full?.isCurrent).toBe(true));
+    expect(line.isLiveRunning).toBe(false);
+    act(() => line.setOptions({ seed: "another" }));
+    expect(line.full?.isCurrent).toBe(false);
+    expect(line.isLiveRunning).toBe(true);
+    await waitFor(() => expect(line.live?.options.seed).toBe("another"));
+    act(() => line.undo());
+    expect(line.full?.isCurrent).toBe(true);
+  });
+
+  it("stores a full run with the scenario, and says so when that fails", async () => {
+    const asked = serve({
+      ...createRoutes("engineer", [createScenario()]),
+      "POST /api/scenarios/s-base/results": () =>
+        Response.json({ code: "too-large", message: "The result is larger than 4 MB." }, { status: 413 }),
+    });
+    renderLine({ children: <Probe /> });
+    act(() => line.runFull());
+    await waitFor(() => expect(line.runError).toMatch(/could not be stored: The result is larger than 4 MB/));
+    expect(line.full?.isCurrent).toBe(true);
+    const [stored] = asked.filter(({ route }) => route.startsWith("POST"));
+    expect(new Headers(stored.init?.headers).get("x-document-digest")).toBe(line.digest);
+    expect(stored.init?.body).toEqual(encodeResult(line.full!.result));
+  });
+
+  it("cancels a run with Esc and starts it with R", async () => {
+    serve(createRoutes("engineer", [createScenario()]));
+    const { client, pending } = createClient(({ priority }) => priority !== "live");
+    const user = userEvent.setup();
+    renderLine({ client, children: <Probe /> });
+    await user.keyboard("r");
+    expect(line.progress).toMatchObject({ doneWeeks: 0, totalWeeks: 12 });
+    act(() => pending[0].hooks.onProgress?.({ replications: 2, total: 4, partial: null }));
+    expect(line.progress?.doneWeeks).toBe(6);
+    await user.keyboard("{Escape}");
+    expect(line.progress).toBeNull();
+    await pause(0);
+    expect(line).toMatchObject({ full: null, runError: null });
+    await user.keyboard("r");
+    await act(async () => pending[1].finish());
+    await waitFor(() => expect(line.full?.isCurrent).toBe(true));
+  });
+
+  it("says in words why a run failed", async () => {
+    serve(createRoutes("engineer", [createScenario()]));
+    const { client, pending } = createClient(({ priority }) => priority !== "live");
+    renderLine({ client, children: <Probe /> });
+    act(() => line.runFull());
+    await act(async () => pending[0].fail(new Error("The run stopped because a worker of this page failed.")));
+    expect(line).toMatchObject({ progress: null, runError: "The run stopped because a worker of this page failed." });
+  });
+
+  it("reads a stored result back", async () => {
+    const { acceptedRisk: _, ...options } = smallOptions;
+    const result = simulate(exampleDocument as Line, options);
+    const { p05, p10, p50, risk, moneyTiedUp, costPerYear } = result.summary;
+    const scenario = createScenario({
+      draftReading: {
+        ...{ resultId: "r-1", ranAt: "2026-11-24T14:02:00Z", engine: result.engine, acceptedRisk: 0.1, weeks: 12 },
+        ...{ atRisk: p10, p05, p10, p50, risk, moneyTiedUp, costPerYear: costPerYear.total },
+      },
+    });
+    serve({
+      ...createRoutes("viewer", [scenario]),
+      "GET /api/results/r-1": () => new Response(encodeResult(result) as Uint8Array<ArrayBuffer>),
+    });
+    renderLine({ role: "viewer", scenarios: [scenario], children: <Probe /> });
+    await waitFor(() => expect(line.full?.isCurrent).toBe(true));
+    expect(line.full?.result).toEqual(result);
+    expect(line.live).toBeNull();
+  });
+
+  it("offers both drafts after a conflict", async () => {
+    const theirs = createDraft({
+      revision: 7,
+      updatedBy: "Jonas Weber",
+      document: { ...exampleDocument, name: "Theirs" },
+    });
+    serve({
+      ...createRoutes("engineer", [createScenario()]),
+      "PUT /api/scenarios/s-base/draft": () =>
+        Response.json(
+          { code: "stale", message: "Saved by Jonas Weber", current: theirs, differs: ["name"] },
+          { status: 409 },
+        ),
+    });
+    renderLine({ children: <Probe /> });
+    act(() => line.apply(rename("Mine")));
+    await waitFor(() => expect(line.saveState.status).toBe("stale"), { timeout: 3_000 });
+    act(() => line.resolveStale("theirs"));
+    expect(line).toMatchObject({ saveState: { status: "saved" }, canUndo: true });
+    expect(line.document.name).toBe("Theirs");
+    act(() => line.undo());
+    expect(line.document.name).toBe("Mine");
+  });
+
+  it("keeps each scenario's history while another is on screen", async () => {
+    const other = createScenario({
+      id: "s-2",
+      name: "Second supplier",
+      draft: createDraft({ document: { ...exampleDocument, name: "Other" } }),
+    });
+    const all = [createScenario(), other];
+    serve(createRoutes("engineer", all));
+    const view = renderLine({ scenarios: all, children: <Probe /> });
+    act(() => line.apply(rename("Edited")));
+    act(() => line.selectScenario("s-2"));
+    expect(address.push).toHaveBeenCalledWith("/lines/l-1/sketch?scenario=s-2", { scroll: false });
+    address.search = "scenario=s-2";
+    view.rerender(view.again());
+    await waitFor(() => expect(line.document.name).toBe("Other"));
+    expect(line.canUndo).toBe(false);
+    address.search = "";
+    view.rerender(view.again());
+    await waitFor(() => expect(line.document.name).toBe("Edited"));
+    expect(line.undoLabel).toBe("Rename to Edited");
+  });
+});
