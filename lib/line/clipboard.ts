@@ -1,0 +1,54 @@
+/** Cells of a block copied out of a spreadsheet, row by row: tab-separated text, cells with tabs or line ends in quotes. */
+export function readCells(text: string): string[][] {
+  const rows: string[][] = [[]];
+  let cell = "";
+  let isQuoted = false;
+  const source = text.replace(/\r\n?/g, "\n").replace(/\n$/, "");
+  for (let i = 0; i < source.length; i++) {
+    const sign = source[i];
+    if (isQuoted) {
+      if (sign !== '"') cell += sign;
+      else if (source[i + 1] === '"') {
+        cell += '"';
+        i++;
+      } else isQuoted = false;
+    } else if (sign === '"' && cell === "") isQuoted = true;
+    else if (sign === "\t" || sign === "\n") {
+      rows[rows.length - 1].push(cell.trim());
+      cell = "";
+      if (sign === "\n") rows.push([]);
+    } else cell += sign;
+  }
+  rows[rows.length - 1].push(cell.trim());
+  return rows;
+}
+
+/**
+ * A number as people and spreadsheets write it: decimal point or comma, thousands parted by spaces, points, commas or
+ * apostrophes, a percent sign (divides by 100), a leading or typographic minus.
+ * @returns Null for an empty cell, NaN for what is no number. "1,234" reads as 1234 and "1,5" as 1.5: a single comma
+ * before exactly three digits parts thousands, like a single point does only where `isWhole` asks for a count.
+ */
+export function readNumber(text: string, isWhole = false): number | null {
+  const plain = text.replace(/[\s\u00a0\u202f'’]/g, "").replace("\u2212", "-");
+  if (plain === "") return null;
+  const isPercent = plain.endsWith("%");
+  const digits = isPercent ? plain.slice(0, -1) : plain;
+  const value = Number(normalise(digits, isWhole) || "x");
+  return isPercent ? value / 100 : value;
+}
+
+function normalise(digits: string, isWhole: boolean): string {
+  const lastPoint = digits.lastIndexOf(".");
+  const lastComma = digits.lastIndexOf(",");
+  if (lastPoint >= 0 && lastComma >= 0) {
+    const [decimal, group] = lastPoint > lastComma ? [".", ","] : [",", "."];
+    return digits.split(group).join("").replace(decimal, ".");
+  }
+  const mark = lastComma >= 0 ? "," : ".";
+  const pieces = digits.split(mark);
+  const looksGrouped =
+    pieces.length > 1 && /^-?[1-9]\d{0,2}$/.test(pieces[0]) && pieces.slice(1).every((piece) => /^\d{3}$/.test(piece));
+  if (looksGrouped && (pieces.length > 2 || mark === "," || isWhole)) return pieces.join("");
+  return digits.replace(",", ".");
+}

@@ -1,0 +1,55 @@
+import type { z } from "zod";
+import { AppError } from "@/lib/errors";
+import { DraftLineInput, LayoutInput, NotesInput } from "./draft-schema";
+import { limits, sayCount } from "./limits";
+import { parseLine } from "./parse";
+import { isRecord } from "./parse-fields";
+import type { LineFile } from "./types";
+
+/**
+ * Reads what an export wrote, or a bare line document. Gaps in numbers are fine; the shape has to be that of a line.
+ * @throws AppError "invalid" or "too-large" with a sentence for the user.
+ */
+export function readLineFile(json: unknown): LineFile {
+  if (!isRecord(json))
+    throw new AppError("invalid", "This file holds no line: it has to be a line document or an export of one.");
+  const isExport = "line" in json && !("nodes" in json);
+  const line = isExport ? json.line : json;
+  if (!isRecord(line) || line.format !== "forebay.line/1")
+    throw new AppError("invalid", 'This file holds no line: its format has to read "forebay.line/1".');
+  if (Array.isArray(line.nodes) && line.nodes.length > limits.nodes)
+    throw new AppError(
+      "too-large",
+      `The file's line has ${sayCount(line.nodes.length)} nodes; the limit is ${sayCount(limits.nodes)}.`,
+    );
+  if (Array.isArray(line.links) && line.links.length > limits.links)
+    throw new AppError(
+      "too-large",
+      `The file's line has ${sayCount(line.links.length)} links; the limit is ${sayCount(limits.links)}.`,
+    );
+  const parsed = parseLine(line);
+  // A draft may have gaps, but a field that nobody knows would be lost without a word.
+  const unknown = "faults" in parsed ? parsed.faults.filter(({ message }) => message.includes("unknown field")) : [];
+  if (unknown.length > 0) refuse(unknown.map(({ message }) => message));
+  return {
+    line: read(DraftLineInput, line, "line"),
+    layout: isExport ? read(LayoutInput, json.layout ?? { positions: {} }, "layout") : { positions: {} },
+    notes: isExport ? read(NotesInput, json.notes ?? [], "notes") : [],
+  };
+}
+
+function read<T>(schema: z.ZodType<T>, value: unknown, where: string): T {
+  const result = schema.safeParse(value);
+  if (result.success) return result.data;
+  return refuse(result.error.issues.map(({ path, message }) => `${[where, ...path].join(".")}: ${message}.`));
+}
+
+function refuse(sentences: readonly string[]): never {
+  const more = sentences.length > 3 ? ` There are ${sentences.length - 3} more faults.` : "";
+  throw new AppError("invalid", `This file cannot be opened. ${sentences.slice(0, 3).join(" ")}${more}`);
+}
+
+/** The export file's text. */
+export function writeLineFile(file: LineFile): string {
+  return `${JSON.stringify({ line: file.line, layout: file.layout, notes: file.notes }, null, 1)}\n`;
+}

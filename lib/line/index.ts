@@ -1,0 +1,3 @@
+export { digestLine } from "./digest";
+export { parseLine } from "./parse";
+export type * from "./types";
