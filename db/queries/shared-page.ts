@@ -4,15 +4,13 @@ import type { Db } from "../context";
 import { result, scenarioVersion, share, shareVersion, user } from "../schema";
 import { personName } from "./people";
 import { findResultBytes } from "./result-fit";
-import { hashToken } from "./shares";
+import { hashToken, isToken } from "./share-token";
 import { toVersionDetail } from "./versions";
 
 export type Gone = { gone: "expired" | "revoked" | "unknown" };
 
-const tokenForm = /^[A-Za-z0-9_-]{43}$/;
-
 async function findOpenShare(db: Db, token: string): Promise<typeof share.$inferSelect | Gone> {
-  if (!tokenForm.test(token)) return { gone: "unknown" };
+  if (!isToken(token)) return { gone: "unknown" };
   const [row] = await db
     .select()
     .from(share)

@@ -1,5 +1,4 @@
 import { and, desc, eq, getTableColumns, inArray, isNull } from "drizzle-orm";
-import { createHash, randomBytes } from "node:crypto";
 import { AppError } from "@/lib/errors";
 import type { CreateShareInput } from "@/lib/schema/line-inputs";
 import type { ShareSummary } from "@/lib/schema/lines";
@@ -7,9 +6,8 @@ import type { Ctx, Db } from "../context";
 import { line, scenario, scenarioVersion, share, shareVersion, user } from "../schema";
 import { addLogEntry } from "./log";
 import { personName } from "./people";
+import { hashToken, makeToken } from "./share-token";
 import { getWorkspaceName } from "./workspaces";
-
-export const hashToken = (token: string) => createHash("sha256").update(token).digest("hex");
 
 const dayMs = 24 * 60 * 60 * 1000;
 
@@ -53,7 +51,7 @@ function titleOf(chosen: Chosen[], { kind, sweep }: CreateShareInput): string {
  * @throws AppError not-found, invalid, or conflict for a version without a stored result
  */
 export async function createShare(ctx: Ctx, input: CreateShareInput): Promise<{ id: string; url: string }> {
-  const token = randomBytes(32).toString("base64url");
+  const token = makeToken();
   const id = await ctx.db.transaction(async (tx) => {
     const chosen = await chooseVersions(ctx, tx, input);
     const { lineId } = chosen[0];
