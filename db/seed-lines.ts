@@ -1,7 +1,7 @@
 import exampleLine from "@/lib/line/example.json";
 import { autoLayout } from "@/lib/line/auto-layout";
 import type { DraftLine, DraftOf } from "@/lib/line/types";
-import { DraftLineInput } from "@/lib/schema/draft-line";
+import { DraftLineInput } from "@/lib/line/draft-schema";
 import type { Content } from "./queries/content";
 
 type Sheet = Omit<Content, "options">;

@@ -23,10 +23,7 @@ export function optionsKeyOf(options: Omit<ScenarioOptions, "acceptedRisk">): st
 export function examineContent({ document, layout, notes, options }: Content) {
   const nDocument = Buffer.byteLength(JSON.stringify(document));
   if (nDocument > documentBytes) {
-    throw new AppError(
-      "too-large",
-      `A line document may take ${documentBytes / 1e6} MB; this one takes ${nDocument} bytes.`,
-    );
+    throw new AppError("too-large", `A line document may take 2 MB; this one takes ${nDocument} bytes.`);
   }
   const nBeside = Buffer.byteLength(JSON.stringify([layout, notes]));
   if (nDocument + nBeside > draftBytes) {

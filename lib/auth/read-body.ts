@@ -6,7 +6,8 @@ function requireType(request: Request, type: string): void {
   if (given !== type) throw new AppError("invalid", `The content type must be ${type}, got ${given || "none"}.`);
 }
 
-const tooLarge = (limit: number) => new AppError("too-large", `This is larger than ${limit / 1_000_000} MB.`);
+const tooLarge = (limit: number) =>
+  new AppError("too-large", `This is larger than ${Math.floor(limit / 1_000_000)} MB.`);
 
 /**
  * Body of a request, counted as it comes in.

@@ -1,11 +1,19 @@
 import { z } from "zod";
+import { limits } from "./limits";
 import type { DraftLine, Layout, Note } from "./types";
 
 /** Most of what a draft may hold; a draft may be larger than what can run by nothing. */
-export const draftLimits = { nodes: 500, links: 1_000, values: 10_000, notes: 200, noteLength: 2_000, nameLength: 120 };
+export const draftLimits = {
+  nodes: limits.nodes,
+  links: limits.links,
+  values: limits.empiricalValues,
+  nameLength: limits.textLength,
+  notes: 200,
+  noteLength: 2_000,
+};
 
 const amount = z.number().nullable();
-const id = z.string().min(1).max(80);
+const id = z.string().min(1).max(limits.textLength);
 const name = z.string().max(draftLimits.nameLength);
 
 const Distribution = z.discriminatedUnion("type", [

@@ -1,17 +1,20 @@
 import { z } from "zod";
-import { draftLimits, DraftLineInput, LayoutInput, NotesInput } from "./draft-line";
+import { draftLimits, DraftLineInput, LayoutInput, NotesInput } from "@/lib/line/draft-schema";
+import { limits } from "@/lib/line/limits";
 import { ScenarioOptions } from "./lines";
 
+/** Of lines and scenarios: what a register can show. */
+const nameLength = 120;
 const id = z.string().min(1).max(80);
 const name = z
   .string()
   .trim()
   .min(1, "Give it a name.")
-  .max(draftLimits.nameLength, `A name may have at most ${draftLimits.nameLength} characters.`);
+  .max(nameLength, `A name may have at most ${nameLength} characters.`);
 
 /** Bytes of JSON that a line document and the whole of a draft may take. */
-export const documentBytes = 2_000_000;
-export const draftBytes = 3_000_000;
+export const documentBytes = limits.documentBytes;
+export const draftBytes = limits.documentBytes + 1_000_000;
 /** Bytes of an encoded result. */
 export const resultBytes = 8_000_000;
 
@@ -58,7 +61,7 @@ const size = z
   .max(2 ** 30);
 
 export const SweepInput = z.object({
-  bufferId: id,
+  bufferId: z.string().min(1).max(limits.textLength),
   bufferName: z.string().max(draftLimits.nameLength),
   unit: z.literal("units"),
   currentSize: size,
@@ -82,7 +85,7 @@ export const SweepInput = z.object({
 export const CreateShareInput = z
   .object({
     kind: z.enum(["version", "comparison"]),
-    versionIds: z.array(id).min(1).max(8, "A link may show at most 8 versions."),
+    versionIds: z.array(id).min(1, "Name a version.").max(8, "A link may show at most 8 versions."),
     sweep: SweepInput.optional(),
     days: z.int().min(1, "At least 1 day.").max(365, "At most 365 days.").default(30),
   })

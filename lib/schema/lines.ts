@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { refuseOptions } from "@/lib/line/limits";
 import type { DraftLine, Layout, Note } from "@/lib/line/types";
 import type { Figure } from "@/lib/simulation/types";
 import type { Role } from "./roles";
@@ -13,9 +14,9 @@ export const ScenarioOptions = z
     acceptedRisk: z.number().gt(0).lt(1),
     seed: z.string().min(1).max(200),
   })
-  .refine(({ replications, weeks, warmupWeeks }) => replications * (weeks + warmupWeeks) <= 1_000_000, {
-    path: ["replications"],
-    message: "Replications times weeks, warm-up included, may be at most 1\u202f000\u202f000.",
+  .superRefine((options, context) => {
+    const message = refuseOptions(options);
+    if (message) context.addIssue({ code: "custom", path: ["replications"], message });
   });
 export type ScenarioOptions = z.infer<typeof ScenarioOptions>;
 

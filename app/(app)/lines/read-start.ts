@@ -1,10 +1,10 @@
 import exampleLine from "@/lib/line/example.json";
 import { autoLayout } from "@/lib/line/auto-layout";
-import { emptyLine } from "@/lib/line/empty";
+import { emptyLine } from "@/lib/line/example";
 import { readLineFile } from "@/lib/line/file";
 import type { DraftLine, LineFile } from "@/lib/line/types";
 import { AppError } from "@/lib/errors";
-import { DraftLineInput, LayoutInput, NotesInput } from "@/lib/schema/draft-line";
+import { DraftLineInput, LayoutInput, NotesInput } from "@/lib/line/draft-schema";
 import { parseInput } from "@/lib/schema/parse-input";
 
 export type Sheet = { document: DraftLine; layout: LineFile["layout"]; notes: LineFile["notes"] };

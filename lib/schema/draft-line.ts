@@ -1,1 +1,0 @@
-export * from "@/lib/line/draft-schema";
