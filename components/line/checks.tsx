@@ -31,7 +31,7 @@ export function Checks() {
           sideOffset={8}
           collisionPadding={8}
           aria-label="Faults and cautions"
-          className="z-40 max-h-[60dvh] w-96 max-w-[calc(100vw-16px)] overflow-auto border-[1.5px] border-ink bg-sheet p-4 shadow-sheet"
+          className="z-40 max-h-[60dvh] w-96 max-w-[calc(100vw-16px)] overflow-auto border-[1.5px] border-ink bg-sheet p-4 shadow-dialog"
         >
           <List
             title="Faults: the line cannot run before they are put right"

@@ -2,7 +2,7 @@
 
 import { useState, type FormEvent } from "react";
 import { Button } from "@/components/ui/button";
-import { Dialog } from "@/components/ui/dialog";
+import { Dialog, DialogAnswers } from "@/components/ui/dialog";
 import { TextField } from "@/components/ui/text-field";
 import type { ActionResult } from "@/lib/errors";
 
@@ -48,14 +48,14 @@ function NameForm({ action, initialName, onClose, submit }: Omit<Props, "isOpen"
   }
 
   return (
-    <form onSubmit={(event) => void send(event)} className="mt-4 grid gap-4" noValidate>
+    <form onSubmit={(event) => void send(event)} className="mt-4" noValidate>
       <TextField label="Name" value={name} onChange={setName} error={error ?? undefined} autoFocus />
-      <div className="flex justify-end gap-2">
+      <DialogAnswers>
         <Button onClick={onClose}>Cancel</Button>
         <Button type="submit" kind="main" disabled={isBusy}>
           {action}
         </Button>
-      </div>
+      </DialogAnswers>
     </form>
   );
 }

@@ -1,7 +1,7 @@
 "use client";
 
 import { Button } from "@/components/ui/button";
-import { Dialog } from "@/components/ui/dialog";
+import { Dialog, DialogAnswers } from "@/components/ui/dialog";
 
 export type Problem = { title: string; message: string };
 
@@ -14,9 +14,9 @@ export function ProblemDialog({ problem, onClose }: { problem: Problem | null; o
       title={problem?.title ?? ""}
       description={problem ? `${problem.message} Nothing was changed.` : undefined}
     >
-      <div className="mt-5 flex justify-end">
+      <DialogAnswers>
         <Button onClick={onClose}>Close</Button>
-      </div>
+      </DialogAnswers>
     </Dialog>
   );
 }

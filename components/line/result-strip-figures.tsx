@@ -2,7 +2,7 @@
 
 import { FillRateRuler } from "@/components/charts/fill-rate-ruler";
 import { useLine } from "@/lib/client/line-state";
-import { formatMoney } from "@/lib/format";
+import { formatMoney, formatNumber, percentileName, withSign } from "@/lib/format";
 import type { Figure } from "@/lib/simulation/types";
 import type { StripFigures, StripReading } from "./strip-reading";
 
@@ -39,10 +39,10 @@ export function ResultStripFigures({ reading: { settled, live } }: { reading: St
 
 function Ruler({ figures, edited, isLive }: { figures: StripFigures; edited: StripFigures | null; isLive: boolean }) {
   const { acceptedRisk, p05, p50, atRisk } = figures;
-  const points = (figure: Figure): string => (figure.value * 100).toFixed(1);
+  const points = (figure: Figure): string => formatNumber(figure.value * 100, 1);
   const names = [
     { name: "P5", figure: p05 },
-    { name: `P${Math.round(acceptedRisk * 1000) / 10}`, figure: atRisk },
+    { name: percentileName(acceptedRisk), figure: atRisk },
     { name: "P50", figure: p50 },
   ].filter(({ name }, i, all) => all.findIndex((other) => other.name === name) === i);
   return (
@@ -96,7 +96,7 @@ function Money({ label, figure, edited, isLive, currency }: MoneyProps) {
         {isLive
           ? "about, live"
           : difference
-            ? `${formatMoney(difference)} if kept`
+            ? `${withSign(formatMoney(difference))} if kept`
             : edited && "about the same if kept"}
       </p>
     </div>

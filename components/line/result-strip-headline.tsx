@@ -1,5 +1,6 @@
 "use client";
 
+import { Progress } from "@/components/ui/progress";
 import { useLine } from "@/lib/client/line-state";
 import { formatPercent } from "@/lib/format";
 import { figuresOf, type StripReading } from "./strip-reading";
@@ -58,7 +59,6 @@ function Running({ risk }: { risk: string }) {
   if (!progress) return null;
   const { partial, doneWeeks, totalWeeks } = progress;
   const figures = partial && figuresOf({ result: partial }, options.acceptedRisk);
-  const share = doneWeeks / totalWeeks;
   const said = figures && sayFigures(figures);
   return (
     <>
@@ -73,18 +73,8 @@ function Running({ risk }: { risk: string }) {
           "So far too few weeks to read."
         )}
       </p>
-      <div
-        role="progressbar"
-        aria-label="Weeks simulated"
-        aria-valuemin={0}
-        aria-valuemax={100}
-        aria-valuenow={Math.round(share * 100)}
-        className="relative mt-2 h-2.5 border border-rule-2 bg-sunk"
-      >
-        <i
-          className="absolute inset-y-0 left-0 border-r-2 border-water-700 bg-[repeating-linear-gradient(0deg,var(--water-400)_0_2px,var(--water-200)_2px_4px)]"
-          style={{ width: `${share * 100}%` }}
-        />
+      <div className="mt-2">
+        <Progress share={doneWeeks / totalWeeks} label="Weeks simulated" />
       </div>
     </>
   );

@@ -89,7 +89,7 @@ export function RunDetails() {
           sideOffset={10}
           collisionPadding={8}
           aria-label="How it is run"
-          className="z-40 w-[21rem] border-[1.5px] border-ink bg-sheet p-4 shadow-sheet"
+          className="z-40 w-[21rem] border-[1.5px] border-ink bg-sheet p-4 shadow-dialog"
         >
           <h3 className="text-l font-[620]">How it is run</h3>
           <p className="mb-3 text-s text-ink-3">

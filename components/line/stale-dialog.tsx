@@ -1,7 +1,7 @@
 "use client";
 
 import { Button } from "@/components/ui/button";
-import { Dialog } from "@/components/ui/dialog";
+import { Dialog, DialogAnswers } from "@/components/ui/dialog";
 import { useLine } from "@/lib/client/line-state";
 import { formatTime } from "@/lib/format";
 
@@ -31,12 +31,12 @@ export function StaleDialog() {
           {differs.length > nShown && <p className="mt-1 text-s text-ink-3">and {differs.length - nShown} more</p>}
         </>
       )}
-      <div className="mt-5 flex flex-wrap justify-end gap-2">
+      <DialogAnswers>
         <Button onClick={() => resolveStale("theirs")}>Take theirs</Button>
         <Button kind="stop" onClick={() => resolveStale("mine")}>
           Save mine over theirs
         </Button>
-      </div>
+      </DialogAnswers>
     </Dialog>
   );
 }

@@ -38,7 +38,7 @@ export function StripField({ label, value, isReadOnly, inputMode = "text", corne
         spellCheck={false}
         aria-invalid={error !== null}
         aria-describedby={error ? `${id}-error` : undefined}
-        className={`h-7 w-full min-w-0 rounded-[2px] border px-2 font-mono text-m tracking-[-.02em] ${
+        className={`h-7 w-full min-w-0 rounded-[2px] border px-2 font-typed text-m tracking-[-.02em] ${
           error ? "border-silt-600" : "border-rule-2"
         } ${isReadOnly ? "bg-sunk text-ink-2" : "bg-sheet"}`}
         onChange={(event) => setTyped(event.target.value)}

@@ -1,11 +1,11 @@
-import { formatCount, formatPercent, headlineSentence } from "@/lib/format";
+import { formatCount, formatNumber, formatPercent, headlineSentence, plural, spreadText } from "@/lib/format";
 import type { LineState } from "@/lib/client/line-state";
 import type { Figure } from "@/lib/simulation/types";
 import type { StripFigures, StripReading } from "./strip-reading";
 
 /** Half-width of a share in points, "± 0.7"; a share that came out 0 or 1 has a bound instead. */
 export function describePoints({ halfWidth, value, bound }: Figure): string | null {
-  if (halfWidth !== null) return `±\u202f${(halfWidth * 100).toFixed(1)}`;
+  if (halfWidth !== null) return spreadText(formatNumber(halfWidth * 100, 1));
   if (bound === undefined) return null;
   return value === 0 ? `below ${formatPercent(bound, 1)}` : `above ${formatPercent(bound, 1)}`;
 }
@@ -17,11 +17,11 @@ export function describeSource(name: string, of: NonNullable<StripReading["settl
 }
 
 export function describeWeeks(weeks: number): string {
-  return `${formatCount(weeks)} ${weeks === 1 ? "week" : "weeks"}`;
+  return `${formatCount(weeks)} ${plural(weeks, "week")}`;
 }
 
 export function describeFaults(n: number): string {
-  return `${n} ${n === 1 ? "fault" : "faults"}`;
+  return `${n} ${plural(n, "fault")}`;
 }
 
 /** Seconds gone and seconds left, "2.1 s gone, about 2.7 s left"; no guess before a twentieth is done. */
@@ -35,7 +35,7 @@ export function describeTime(done: number, total: number, goneMs: number): strin
 /** The sentence of a figure; a live reading says "about". */
 export function sayFigures({ atRisk, acceptedRisk }: StripFigures, isLive = false) {
   const said = headlineSentence(atRisk, acceptedRisk);
-  return isLive ? { ...said, before: `${said.before} about` } : said;
+  return isLive && Number.isFinite(atRisk.value) ? { ...said, before: `${said.before} about` } : said;
 }
 
 /** What the strip tells those who cannot see it, once per change that matters. */

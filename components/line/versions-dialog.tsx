@@ -1,9 +1,9 @@
 "use client";
 
 import { Button } from "@/components/ui/button";
-import { Dialog } from "@/components/ui/dialog";
+import { Dialog, DialogAnswers } from "@/components/ui/dialog";
 import { useLine } from "@/lib/client/line-state";
-import { formatDate, formatPercent, formatTime } from "@/lib/format";
+import { formatDateTime, formatPercent } from "@/lib/format";
 
 type Props = { isOpen: boolean; onClose(): void; onTake(versionId: string): void };
 
@@ -14,6 +14,7 @@ export function VersionsDialog({ isOpen, onClose, onTake }: Props) {
     <Dialog
       open={isOpen}
       onOpenChange={(open) => !open && onClose()}
+      isWide
       title={`Kept versions of ${scenario.name}`}
       description={
         mayEdit
@@ -35,7 +36,7 @@ export function VersionsDialog({ isOpen, onClose, onTake }: Props) {
             <tr key={id} className="border-b border-rule">
               <td className="py-1.5 font-semibold">{number}</td>
               <td className="py-1.5">
-                {formatDate(createdAt)}, {formatTime(createdAt)} <span className="text-ink-3">by {createdBy}</span>
+                {formatDateTime(createdAt)} <span className="text-ink-3">by {createdBy}</span>
               </td>
               <td className="py-1.5 text-right">
                 {reading ? formatPercent(reading.atRisk.value, 1) : <span className="text-ink-3">not run</span>}
@@ -51,9 +52,9 @@ export function VersionsDialog({ isOpen, onClose, onTake }: Props) {
           ))}
         </tbody>
       </table>
-      <div className="mt-5 flex justify-end">
+      <DialogAnswers>
         <Button onClick={onClose}>Close</Button>
-      </div>
+      </DialogAnswers>
     </Dialog>
   );
 }
