@@ -1,7 +1,7 @@
 "use client";
 
 import { useLine } from "@/lib/client/line-state";
-import { formatTime } from "@/lib/format";
+import { LocalTime } from "./local-time";
 
 /** Whether the draft is saved, and when it was. */
 export function SaveTag() {
@@ -9,7 +9,11 @@ export function SaveTag() {
   if (!mayEdit) return <span className="text-s whitespace-nowrap text-ink-3">Read only</span>;
   return (
     <span role="status" className="text-s whitespace-nowrap text-ink-3">
-      {saveState.status === "saved" && <>Saved {formatTime(saveState.at)}</>}
+      {saveState.status === "saved" && (
+        <>
+          Saved <LocalTime at={saveState.at} />
+        </>
+      )}
       {saveState.status === "waiting" && "Not saved yet"}
       {saveState.status === "saving" && "Saving"}
       {saveState.status === "stale" && <span className="text-silt-700">Saved by somebody else</span>}
