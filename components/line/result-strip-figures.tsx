@@ -61,7 +61,7 @@ function Ruler({ figures, edited, isLive }: { figures: StripFigures; edited: Str
           ))}
         </span>
       </p>
-      <div className="mt-2.5">
+      <div className="mt-1">
         <FillRateRuler
           p05={p05.value}
           atRisk={atRisk}

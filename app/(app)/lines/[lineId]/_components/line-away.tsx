@@ -1,3 +1,4 @@
+import type { Route } from "next";
 import Link from "next/link";
 import { Button } from "@/components/ui/button";
 
@@ -14,7 +15,7 @@ export function LineAway({ lineName, error, retry }: Props) {
           <p className="mt-1 text-m text-ink-2">Nothing that was saved is lost.</p>
           <div className="mt-4 flex gap-2">
             <Button onClick={retry}>Try again</Button>
-            <Link href="/lines" className="self-center text-water-700 underline underline-offset-3">
+            <Link href={"/lines" as Route} className="self-center text-water-700 underline underline-offset-3">
               All lines
             </Link>
           </div>
