@@ -8,6 +8,7 @@ import * as schema from "./schema";
 
 export type Handle = { db: Db; close(): Promise<void> };
 
+const shared = globalThis as unknown as { forebayDatabase?: Promise<Handle> };
 const migrationsFolder = path.join(process.cwd(), "db/migrations");
 
 async function open(): Promise<Handle> {
@@ -30,6 +31,7 @@ async function open(): Promise<Handle> {
     const db = drizzle({ client, schema });
     await migrate(db, { migrationsFolder });
     const close = async () => {
+      shared.forebayDatabase = undefined;
       await client.close();
       unlock();
     };
@@ -39,8 +41,6 @@ async function open(): Promise<Handle> {
     throw error;
   }
 }
-
-const shared = globalThis as unknown as { forebayDatabase?: Promise<Handle> };
 
 /** The one database of this process, opened and migrated on first use; kept on `globalThis` across hot reloads. */
 export function openDatabase(): Promise<Handle> {

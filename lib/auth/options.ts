@@ -13,7 +13,7 @@ export const leastPasswordLength = 10;
 function baseUrl(): BetterAuthOptions["baseURL"] {
   if (env.appUrl) return env.appUrl;
   if (env.isProduction && !env.isLocal) throw new Error("APP_URL is required, such as https://forebay.example");
-  return { allowedHosts: ["localhost:*", "127.0.0.1:*"], protocol: "http" };
+  return { allowedHosts: ["localhost:*", "127.0.0.1:*"], protocol: "http", fallback: "http://localhost:3000" };
 }
 
 /** Limits by address are only as good as the proxy in front: name it in TRUSTED_PROXIES. The limit by account needs none. */
@@ -22,6 +22,7 @@ export function authOptions() {
     appName: "Forebay",
     baseURL: baseUrl(),
     telemetry: { enabled: false },
+    logger: { level: env.isTest ? "error" : "warn" },
     emailAndPassword: { enabled: true, minPasswordLength: leastPasswordLength, maxPasswordLength: 200 },
     rateLimit: {
       enabled: !env.isTest,

@@ -104,7 +104,7 @@ describe("saveDraft", () => {
 
   it("refuses a document above 2 MB with the size named", async () => {
     const document = smallLine();
-    const values = Array.from({ length: 200_000 }, (_, i) => 1_000_000 + i + 0.5);
+    const values = Array.from({ length: 250_000 }, (_, i) => 1_000_000 + i + 0.5);
     document.nodes = document.nodes.map((node) =>
       node.kind === "customer" ? { ...node, weeklyDemand: { type: "empirical", values } } : node,
     );

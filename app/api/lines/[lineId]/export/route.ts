@@ -25,7 +25,7 @@ export async function GET(request: Request, { params }: Props) {
     const chosen = line.scenarios.find(({ id, isBase }) => (asked ? id === asked : isBase));
     if (!chosen) throw new AppError("not-found", "This line has no such scenario.");
     const { draft, name } = await getScenario(ctx, chosen.id);
-    return new Response(writeLineFile(draft), {
+    return new Response(writeLineFile({ line: draft.document, layout: draft.layout, notes: draft.notes }), {
       headers: {
         "Content-Type": "application/json; charset=utf-8",
         "Content-Disposition": `attachment; filename="${fileNameOf(line.name, name)}.json"`,
