@@ -19,7 +19,7 @@ export function ResultStripHeadline({ reading }: { reading: StripReading }) {
   );
 }
 
-function Sentence({ reading: { settled, live } }: { reading: StripReading }) {
+function Sentence({ reading: { settled, live, edited } }: { reading: StripReading }) {
   const { scenario, progress, faults, isLiveRunning, options } = useLine();
   const risk = `accepted risk ${formatPercent(options.acceptedRisk, 0)}`;
   if (progress) return <Running risk={risk} />;
@@ -29,19 +29,19 @@ function Sentence({ reading: { settled, live } }: { reading: StripReading }) {
       <>
         <Caption parts={[describeSource(scenario.name, settled.of), risk, points && `${points} points`]} />
         <Say {...sayFigures(settled)} />
-        <Second live={live} of={settled.of} />
+        <Second edited={edited} of={settled.of} />
       </>
     );
   }
   if (live && faults.length === 0) {
-    const points = describePoints(live.atRisk);
+    const points = describePoints(edited.atRisk);
     return (
       <>
         <Caption
           parts={[scenario.name, `live reading, ${describeWeeks(live.weeks)}`, risk, points && `${points} points`]}
         />
         <Say {...sayFigures(live, true)} />
-        <Second live={null} of={null} />
+        <Second edited={null} of={null} />
       </>
     );
   }
@@ -49,7 +49,7 @@ function Sentence({ reading: { settled, live } }: { reading: StripReading }) {
     <>
       <Caption parts={[scenario.name, risk]} />
       <p className={say}>{faults.length > 0 ? "This line cannot run yet." : "Not run yet."}</p>
-      {isLiveRunning ? <Pulse text="Taking a first reading" /> : <Second live={null} of={null} />}
+      {isLiveRunning ? <Pulse text="Taking a first reading" /> : <Second edited={null} of={null} />}
     </>
   );
 }
@@ -80,8 +80,10 @@ function Running({ risk }: { risk: string }) {
   );
 }
 
+type Of = NonNullable<StripReading["settled"]>["of"];
+
 /** The line below the sentence: trouble first, then what the edit does. */
-function Second({ live, of }: { live: StripReading["live"]; of: NonNullable<StripReading["settled"]>["of"] | null }) {
+function Second({ edited, of }: Pick<StripReading, "edited"> & { of: Of | null }) {
   const { faults, runError, isLiveRunning, select } = useLine();
   if (runError) return <p className="mt-1 border-l-[3px] border-silt-600 pl-2 text-m text-silt-700">{runError}</p>;
   if (faults.length > 0) {
@@ -105,14 +107,14 @@ function Second({ live, of }: { live: StripReading["live"]; of: NonNullable<Stri
   }
   if (of === "now") return null;
   if (of === null) return <p className="mt-1 text-m text-ink-2">Not run in full yet.</p>;
-  if (!live) return isLiveRunning ? <Pulse text="Reading your edit" /> : null;
+  if (!edited) return isLiveWaiting ? <Pulse text="Reading your edit" /> : null;
   return (
     <p className="mt-[3px] flex flex-wrap items-baseline gap-x-1.5 text-[15px]/5">
       <Ring isMoving={isLiveRunning} />
-      <b className="font-bold text-water-700">With your edit, about {formatPercent(live.atRisk.value, 1)}</b>
-      <span>{describePoints(live.atRisk)}</span>
+      <b className="font-bold text-water-700">With your edit, about {formatPercent(edited.atRisk.value, 1)}</b>
+      <span>{describePoints(edited.atRisk)}</span>
       <span className="ml-0.5 text-s text-ink-3">
-        {isLiveRunning ? "reading again" : `live reading, ${describeWeeks(live.weeks)}`}
+        {isLiveRunning ? "reading again" : `live reading, ${describeWeeks(edited.weeks)}`}
       </span>
     </p>
   );

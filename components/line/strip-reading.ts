@@ -1,4 +1,5 @@
 import type { LineState, Reading } from "@/lib/client/line-state";
+import { moveFigure, pairedDifference } from "@/lib/client/paired";
 import { totalWeeks } from "@/lib/client/run-size";
 import type { ReadingSummary } from "@/lib/schema/lines";
 import { percentile } from "@/lib/simulation/percentile";
@@ -20,19 +21,36 @@ export type StripReading = {
   /** "kept": of the last kept version; "now": of what is on screen; "before": a run made before the last edits. */
   settled: (StripFigures & { of: "kept" | "now" | "before" }) | null;
   live: StripFigures | null;
+  /** What the edit would make of the settled figures; null before both quick runs of the comparison are there. */
+  edited: { atRisk: Figure; moneyTiedUp: number; costPerYear: number; weeks: number } | null;
 };
 
-type Shown = Pick<LineState, "full" | "live" | "keptReading" | "options" | "scenario">;
+type Shown = Pick<LineState, "full" | "live" | "liveBase" | "keptReading" | "options" | "scenario">;
 
-export function readStrip({ full, live, keptReading, options, scenario }: Shown): StripReading {
+export function readStrip({ full, live, liveBase, keptReading, options, scenario }: Shown): StripReading {
   const { acceptedRisk } = options;
   const settled = full
     ? { ...figuresOf(full, acceptedRisk), of: ofWhat(full, scenario.kept.digest) }
     : keptReading
       ? { ...figuresOfSummary(keptReading), of: "kept" as const }
       : null;
-  const isEdited = !full?.isCurrent;
-  return { settled, live: live && isEdited ? figuresOf(live, acceptedRisk) : null };
+  const quick = full?.isCurrent ? null : live;
+  return {
+    settled,
+    live: quick && figuresOf(quick, acceptedRisk),
+    edited: settled && quick && liveBase ? readEdit(settled, quick, liveBase, acceptedRisk) : null,
+  };
+}
+
+/** The settled figures moved by what differs between two quick runs with the same draws. */
+function readEdit(settled: StripFigures, live: Reading, base: Reading, acceptedRisk: number): StripReading["edited"] {
+  const [after, before] = [live.result.summary, base.result.summary];
+  return {
+    atRisk: moveFigure(settled.atRisk, pairedDifference(live.result, base.result, acceptedRisk)),
+    moneyTiedUp: after.moneyTiedUp.value - before.moneyTiedUp.value,
+    costPerYear: after.costPerYear.total.value - before.costPerYear.total.value,
+    weeks: totalWeeks(live.options),
+  };
 }
 
 function ofWhat(full: NonNullable<LineState["full"]>, keptDigest: string | null): "kept" | "now" | "before" {

@@ -56,11 +56,11 @@ function requireSameNodes({ tallies: { shape } }: RunResult, { nodes }: DraftLin
   }
 }
 
-function figuresOf(run: RunResult): ResultRow["figures"] {
+function figuresOf(run: RunResult, { money: { currency } }: DraftLine): ResultRow["figures"] {
   const { risk, moneyTiedUp, costPerYear } = run.summary;
   const [p05, p10, p50] = [0.05, 0.1, 0.5].map((p) => percentile(run, p));
   const weeks = run.options.replications * run.options.weeks;
-  return { p05, p10, p50, risk, moneyTiedUp, costPerYear: costPerYear.total, weeks };
+  return { p05, p10, p50, risk, moneyTiedUp, costPerYear: costPerYear.total, weeks, currency };
 }
 
 /**
@@ -88,7 +88,7 @@ export async function storeResult(
     const fit = { workspaceId: ctx.workspaceId, lineId, digest, optionsKey: target.optionsKey };
     const [fresh] = await tx
       .insert(result)
-      .values({ ...fit, engine: run.engine, figures: figuresOf(run), atRisk: {}, ranBy: ctx.userId })
+      .values({ ...fit, engine: run.engine, figures: figuresOf(run, target.document), atRisk: {}, ranBy: ctx.userId })
       .onConflictDoNothing()
       .returning();
     if (fresh) await tx.insert(resultData).values({ resultId: fresh.id, bytes: compressed });

@@ -6,7 +6,7 @@ import { line } from "./line";
 
 export type StoredFigures = Pick<
   ReadingSummary,
-  "p05" | "p10" | "p50" | "risk" | "moneyTiedUp" | "costPerYear" | "weeks"
+  "p05" | "p10" | "p50" | "risk" | "moneyTiedUp" | "costPerYear" | "weeks" | "currency"
 >;
 
 /** What is known of a result without reading its bytes. One row for each document, run options and engine of a line. */

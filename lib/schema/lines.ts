@@ -43,6 +43,8 @@ export type ReadingSummary = {
   moneyTiedUp: Figure;
   costPerYear: Figure;
   weeks: number;
+  /** ISO 4217 code of the line that was run. */
+  currency: string;
 };
 
 export type LineSummary = {
