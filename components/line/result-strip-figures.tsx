@@ -6,40 +6,30 @@ import { formatMoney, formatNumber, percentileName, withSign } from "@/lib/forma
 import type { Figure } from "@/lib/simulation/types";
 import type { StripFigures, StripReading } from "./strip-reading";
 
-const cell = "hidden border-l border-rule px-3 pt-[11px] pb-2.5 lg:block min-[1380px]:px-4";
+const cell = "hidden overflow-hidden border-l border-rule px-3 pt-[11px] pb-2.5 lg:block min-[86.25rem]:px-4";
 
 /** The ruler, capital tied up and cost a year: of the settled reading, with what the edit would change. */
-export function ResultStripFigures({ reading: { settled, live } }: { reading: StripReading }) {
+export function ResultStripFigures({ reading: { settled, live, edited } }: { reading: StripReading }) {
   const { document } = useLine();
   const figures = settled ?? live;
-  const edited = settled ? live : null;
-  const { currency } = document.money;
+  const money = { isLive: !settled, currency: document.money.currency };
   return (
     <>
       <div className={cell}>
-        {figures ? <Ruler figures={figures} edited={edited} isLive={!settled} /> : <Missing label="Weekly fill rate" />}
+        {figures ? (
+          <Ruler figures={figures} edited={edited?.atRisk ?? null} isLive={!settled} />
+        ) : (
+          <Missing label="Weekly fill rate" />
+        )}
       </div>
-      <Money
-        label="Capital tied up"
-        figure={figures?.moneyTiedUp}
-        edited={edited?.moneyTiedUp}
-        isLive={!settled}
-        currency={currency}
-      />
-      <Money
-        label="Cost a year"
-        figure={figures?.costPerYear}
-        edited={edited?.costPerYear}
-        isLive={!settled}
-        currency={currency}
-      />
+      <Money label="Capital tied up" figure={figures?.moneyTiedUp} difference={edited?.moneyTiedUp} {...money} />
+      <Money label="Cost a year" figure={figures?.costPerYear} difference={edited?.costPerYear} {...money} />
     </>
   );
 }
 
-function Ruler({ figures, edited, isLive }: { figures: StripFigures; edited: StripFigures | null; isLive: boolean }) {
+function Ruler({ figures, edited, isLive }: { figures: StripFigures; edited: Figure | null; isLive: boolean }) {
   const { acceptedRisk, p05, p50, atRisk } = figures;
-  const points = (figure: Figure): string => formatNumber(figure.value * 100, 1);
   const names = [
     { name: "P5", figure: p05 },
     { name: percentileName(acceptedRisk), figure: atRisk },
@@ -49,14 +39,14 @@ function Ruler({ figures, edited, isLive }: { figures: StripFigures; edited: Str
     <>
       <p className="flex justify-between gap-2 text-s whitespace-nowrap text-ink-2">
         <span>
-          <span className="hidden min-[1380px]:inline">Weekly fill rate</span>
-          <span className="min-[1380px]:hidden">Fill rate</span>
+          <span className="hidden min-[86.25rem]:inline">Weekly fill rate</span>
+          <span className="min-[86.25rem]:hidden">Fill rate</span>
         </span>
         <span>
           {names.map(({ name, figure }, i) => (
             <span key={name}>
               {i > 0 && " · "}
-              <b className="font-semibold">{name}</b> {points(figure)}
+              <b className="font-semibold">{name}</b> {formatNumber(figure.value * 100, 1)}
             </span>
           ))}
         </span>
@@ -67,7 +57,7 @@ function Ruler({ figures, edited, isLive }: { figures: StripFigures; edited: Str
           atRisk={atRisk}
           p50={p50.value}
           acceptedRisk={acceptedRisk}
-          live={edited?.atRisk ?? null}
+          live={edited}
           isLive={isLive}
         />
       </div>
@@ -75,9 +65,9 @@ function Ruler({ figures, edited, isLive }: { figures: StripFigures; edited: Str
   );
 }
 
-type MoneyProps = { label: string; figure?: Figure; edited?: Figure; isLive: boolean; currency: string };
+type MoneyProps = { label: string; figure?: Figure; difference?: number; isLive: boolean; currency: string };
 
-function Money({ label, figure, edited, isLive, currency }: MoneyProps) {
+function Money({ label, figure, difference, isLive, currency }: MoneyProps) {
   if (!figure) {
     return (
       <div className={cell}>
@@ -85,22 +75,21 @@ function Money({ label, figure, edited, isLive, currency }: MoneyProps) {
       </div>
     );
   }
-  const difference = edited && Math.round((edited.value - figure.value) / 100) * 100;
   return (
     <div className={cell}>
       <p className="mb-[3px] text-s text-ink-2">{label}</p>
-      <p className="text-[17px]/6 font-[620] tracking-[-.01em] whitespace-nowrap min-[1380px]:text-xl">
+      <p className="text-l font-[620] tracking-[-.01em] whitespace-nowrap min-[86.25rem]:text-xl">
         <span className="text-[13px] font-normal text-ink-3">{currency}</span> {formatMoney(figure.value)}
       </p>
       <p className="text-s whitespace-nowrap text-water-700">
-        {isLive
-          ? "about, live"
-          : difference
-            ? `${withSign(formatMoney(difference))} if kept`
-            : edited && "about the same if kept"}
+        {isLive ? "about, live" : difference !== undefined && describeDifference(difference)}
       </p>
     </div>
   );
+}
+
+function describeDifference(difference: number): string {
+  return Math.abs(difference) < 50 ? "about the same if kept" : `${withSign(formatMoney(difference))} if kept`;
 }
 
 function Missing({ label }: { label: string }) {

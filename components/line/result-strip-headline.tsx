@@ -29,19 +29,19 @@ function Sentence({ reading: { settled, live, edited } }: { reading: StripReadin
       <>
         <Caption parts={[describeSource(scenario.name, settled.of), risk, points && `${points} points`]} />
         <Say {...sayFigures(settled)} />
-        <Second edited={edited} of={settled.of} />
+        <Second edited={edited} live={live} of={settled.of} />
       </>
     );
   }
   if (live && faults.length === 0) {
-    const points = describePoints(edited.atRisk);
+    const points = describePoints(live.atRisk);
     return (
       <>
         <Caption
           parts={[scenario.name, `live reading, ${describeWeeks(live.weeks)}`, risk, points && `${points} points`]}
         />
         <Say {...sayFigures(live, true)} />
-        <Second edited={null} of={null} />
+        <Second edited={null} live={null} of={null} />
       </>
     );
   }
@@ -49,7 +49,7 @@ function Sentence({ reading: { settled, live, edited } }: { reading: StripReadin
     <>
       <Caption parts={[scenario.name, risk]} />
       <p className={say}>{faults.length > 0 ? "This line cannot run yet." : "Not run yet."}</p>
-      {isLiveRunning ? <Pulse text="Taking a first reading" /> : <Second edited={null} of={null} />}
+      {isLiveRunning ? <Pulse text="Taking a first reading" /> : <Second edited={null} live={null} of={null} />}
     </>
   );
 }
@@ -83,7 +83,7 @@ function Running({ risk }: { risk: string }) {
 type Of = NonNullable<StripReading["settled"]>["of"];
 
 /** The line below the sentence: trouble first, then what the edit does. */
-function Second({ edited, of }: Pick<StripReading, "edited"> & { of: Of | null }) {
+function Second({ edited, live, of }: Pick<StripReading, "edited" | "live"> & { of: Of | null }) {
   const { faults, runError, isLiveRunning, select } = useLine();
   if (runError) return <p className="mt-1 border-l-[3px] border-silt-600 pl-2 text-m text-silt-700">{runError}</p>;
   if (faults.length > 0) {
@@ -107,20 +107,24 @@ function Second({ edited, of }: Pick<StripReading, "edited"> & { of: Of | null }
   }
   if (of === "now") return null;
   if (of === null) return <p className="mt-1 text-m text-ink-2">Not run in full yet.</p>;
-  if (!edited) return isLiveWaiting ? <Pulse text="Reading your edit" /> : null;
+  const now = edited ?? live;
+  if (!now) return isLiveRunning ? <Pulse text="Reading your edit" /> : null;
+  if (!edited && isLiveRunning) return <Pulse text="Reading your edit" />;
   return (
     <p className="mt-[3px] flex flex-wrap items-baseline gap-x-1.5 text-[15px]/5">
       <Ring isMoving={isLiveRunning} />
-      <b className="font-bold text-water-700">With your edit, about {formatPercent(edited.atRisk.value, 1)}</b>
-      <span>{describePoints(edited.atRisk)}</span>
+      <b className="font-bold text-water-700">
+        {edited ? "With your edit" : "As it is on screen"}, about {formatPercent(now.atRisk.value, 1)}
+      </b>
+      <span>{describePoints(now.atRisk)}</span>
       <span className="ml-0.5 text-s text-ink-3">
-        {isLiveRunning ? "reading again" : `live reading, ${describeWeeks(edited.weeks)}`}
+        {isLiveRunning ? "reading again" : `live reading, ${describeWeeks(now.weeks)}`}
       </span>
     </p>
   );
 }
 
-const say = "text-l font-[330] tracking-[-.015em] text-balance lg:text-[21px]/7 min-[1380px]:text-2xl";
+const say = "text-l font-[330] tracking-[-.015em] text-balance lg:text-[21px]/7 min-[86.25rem]:text-2xl";
 
 function Say({ before, value, after }: { before: string; value: string; after: string }) {
   return (

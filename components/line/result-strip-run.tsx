@@ -73,13 +73,13 @@ function InProgress() {
   return (
     <>
       <p className="mb-[3px] truncate text-s text-ink-2 max-lg:hidden">Run, seed phrase {options.seed}</p>
-      <p className="text-l whitespace-nowrap">
+      <p className="text-l/5 whitespace-nowrap">
         {formatCount(doneWeeks)} <span className="text-ink-3">of {describeWeeks(total)}</span>
       </p>
       <p className="text-s whitespace-nowrap text-ink-3">
         {describeTime(doneWeeks, total, Math.max(0, nowMs - startedAtMs))}
       </p>
-      <Button kind="stop" size="small" className="mt-1.5 min-h-11 w-full lg:min-h-[26px]" onClick={cancelRun}>
+      <Button kind="stop" size="small" className="mt-1 min-h-11 w-full lg:min-h-[26px]" onClick={cancelRun}>
         Cancel run <Kbd className="max-lg:hidden">Esc</Kbd>
       </Button>
     </>

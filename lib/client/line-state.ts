@@ -87,6 +87,8 @@ export type LineState = {
   keptReading: ReadingSummary | null;
   /** Quick run of the document on screen; null while it has faults or before the first one. */
   live: Reading | null;
+  /** The document that `full` is of, run like `live` with the same draws: what differs between the two is the edit's doing. */
+  liveBase: Reading | null;
   isLiveRunning: boolean;
   progress: RunProgress | null;
   runError: string | null;

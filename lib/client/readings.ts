@@ -24,12 +24,12 @@ export function toLiveOptions(options: ScenarioOptions): ScenarioOptions {
 }
 
 /** The newest reading of this document and these options, else the newest of all. */
-export function chooseReading(
-  readings: readonly Reading[],
+export function chooseReading<R extends Reading>(
+  readings: readonly R[],
   digest: string | null,
   options: ScenarioOptions,
-): (Reading & { isCurrent: boolean }) | null {
-  const fits = (reading: Reading): boolean => reading.digest === digest && areSameRun(reading.options, options);
+): (R & { isCurrent: boolean }) | null {
+  const fits = (reading: R): boolean => reading.digest === digest && areSameRun(reading.options, options);
   const current = readings.find(fits);
   if (current)
     return { ...current, options: { ...current.options, acceptedRisk: options.acceptedRisk }, isCurrent: true };

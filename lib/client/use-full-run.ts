@@ -7,11 +7,11 @@ import { describeError } from "./api";
 import type { Reading, RunProgress } from "./line-state";
 import { chooseReading, toRunOptions } from "./readings";
 import { useSimulation } from "./use-simulation";
-import { useStoredReading } from "./use-stored-reading";
+import { useStoredReading, type ReadingOfLine } from "./use-stored-reading";
 
 const nReadingsKept = 6;
 
-type Made = Record<string, Reading[]>;
+type Made = Record<string, ReadingOfLine[]>;
 
 /**
  * The full runs of the scenario on screen: those made in this page and the one stored before.
@@ -53,7 +53,14 @@ export function useFullRun(
         onProgress: ({ replications, partial }) =>
           setProgress({ ...start, doneWeeks: replications * options.weeks, partial }),
       });
-      const reading: Reading = { result, digest, options, ranAt: new Date().toISOString(), engine: result.engine };
+      const reading: ReadingOfLine = {
+        line,
+        result,
+        digest,
+        options,
+        ranAt: new Date().toISOString(),
+        engine: result.engine,
+      };
       setMade((all) => ({ ...all, [scenarioId]: [reading, ...(all[scenarioId] ?? [])].slice(0, nReadingsKept) }));
       abort.current = null;
       setProgress(null);

@@ -43,6 +43,14 @@ export function useLineState({ line, scenario, isSwitching, select, actions }: S
   const run = useFullRun(scenario, reading.parsed, reading.digest, options, done.storeRun);
   const isLiveWanted = !run.isLoading && !run.full?.isCurrent;
   const quick = useLiveRun(scenario.id, reading.parsed, reading.digest, options, isLiveWanted);
+  const base = run.full?.line ? run.full : null;
+  const quickBase = useLiveRun(
+    scenario.id,
+    base?.line ?? null,
+    base?.digest ?? null,
+    options,
+    isLiveWanted && reading.parsed !== null,
+  );
   const [selection, setSelection] = useSelection(scenario.id, document);
 
   const apply = useCallback(
@@ -116,9 +124,10 @@ export function useLineState({ line, scenario, isSwitching, select, actions }: S
     full: run.full,
     keptReading: kept.reading,
     live: quick.live,
-    isLiveRunning: quick.isLiveRunning,
+    liveBase: quickBase.isLiveRunning ? null : quickBase.live,
+    isLiveRunning: quick.isLiveRunning || quickBase.isLiveRunning,
     progress: run.progress,
-    runError: run.runError ?? quick.liveError,
+    runError: run.runError ?? quick.liveError ?? quickBase.liveError,
     runFull: () => void run.runFull(),
     cancelRun: run.cancelRun,
   };

@@ -11,9 +11,10 @@ import { useSimulation } from "./use-simulation";
 const pauseMs = 150;
 
 type Question = { line: Line; digest: string; options: ScenarioOptions };
+type Answer = { reading: Reading | null; error: string | null; key: string; scope: string };
 
 /**
- * Keeps a quick run of the line on screen up to date; each change of the question cancels the run before.
+ * Keeps a quick run of one line up to date; each change of the question cancels the run before.
  * @param scope - The answer is forgotten when it changes.
  * @param isWanted - False while a full run answers the same question.
  */
@@ -25,12 +26,7 @@ export function useLiveRun(
   isWanted: boolean,
 ): { live: Reading | null; isLiveRunning: boolean; liveError: string | null } {
   const client = useSimulation();
-  const [answer, setAnswer] = useState<{
-    reading: Reading | null;
-    error: string | null;
-    key: string;
-    scope: string;
-  } | null>(null);
+  const [answer, setAnswer] = useState<Answer | null>(null);
   const key = digest === null ? null : JSON.stringify([digest, toRunOptions(options)]);
   const question = useRef<Question | null>(null);
   useEffect(() => {

@@ -200,7 +200,14 @@ describe("LineProvider", () => {
     const { p05, p10, p50, risk, moneyTiedUp, costPerYear } = result.summary;
     const scenario = createScenario({
       draftReading: {
-        ...{ resultId: "r-1", ranAt: "2026-11-24T14:02:00Z", engine: result.engine, acceptedRisk: 0.1, weeks: 12 },
+        ...{
+          resultId: "r-1",
+          ranAt: "2026-11-24T14:02:00Z",
+          engine: result.engine,
+          acceptedRisk: 0.1,
+          weeks: 12,
+          currency: "EUR",
+        },
         ...{ atRisk: p10, p05, p10, p50, risk, moneyTiedUp, costPerYear: costPerYear.total },
       },
     });

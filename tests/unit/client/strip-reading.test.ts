@@ -2,10 +2,11 @@ import { describe, expect, it } from "vitest";
 import { readStrip } from "@/components/line/strip-reading";
 import { describePoints, describeTime, sayFigures } from "@/components/line/strip-text";
 import type { LineState, Reading } from "@/lib/client/line-state";
+import { moveFigure, pairedDifference } from "@/lib/client/paired";
 import example from "@/lib/line/example.json";
 import type { Line } from "@/lib/line/types";
 import { defaultOptions, type ReadingSummary } from "@/lib/schema/lines";
-import { percentile, simulate } from "@/lib/simulation";
+import { percentile, simulate, type RunResult } from "@/lib/simulation";
 
 const { acceptedRisk: _, ...runOptions } = { ...defaultOptions, replications: 20, weeks: 10, warmupWeeks: 2 };
 const result = simulate(example as unknown as Line, runOptions);
@@ -16,6 +17,7 @@ const shown = (changed: Partial<Parameters<typeof readStrip>[0]>) =>
   readStrip({
     full: null,
     live: null,
+    liveBase: null,
     keptReading: null,
     options,
     scenario: { kept: { digest: "kept" } } as LineState["scenario"],
@@ -66,5 +68,37 @@ describe("the words of the strip", () => {
     expect(sayFigures(figures, true).before).toBe("In 9 of 10 weeks we ship at least about");
     const nothing = sayFigures({ ...figures, atRisk: { value: NaN, halfWidth: null } }, true);
     expect(nothing.before).not.toMatch(/about/);
+  });
+});
+
+describe("pairedDifference", () => {
+  const shifted = (by: number): RunResult => ({ ...result, fillRates: result.fillRates.map((rate) => rate + by) });
+
+  it("is nothing, with certainty, between a run and itself", () => {
+    expect(pairedDifference(result, result, 0.1)).toEqual({ value: 0, halfWidth: 0 });
+  });
+
+  it("finds a shift of all weeks at once, without the luck that both runs share", () => {
+    const { value, halfWidth } = pairedDifference(shifted(0.02), result, 0.1);
+    expect(value).toBeCloseTo(0.02, 6);
+    expect(halfWidth).toBeLessThan(1e-6);
+    expect(result.summary.p10.halfWidth).toBeGreaterThan(0.01);
+  });
+
+  it("refuses runs that are no pair", () => {
+    const shorter = simulate(example as unknown as Line, { ...runOptions, replications: 3 });
+    expect(() => pairedDifference(result, shorter, 0.1)).toThrow(RangeError);
+  });
+
+  it("moves the settled figure and keeps it a share", () => {
+    const settled = { value: 0.99, halfWidth: 0.003 };
+    expect(moveFigure(settled, { value: 0.05, halfWidth: 0.004 })).toEqual({ value: 1, halfWidth: 0.005 });
+  });
+
+  it("shows no edit where the edit changes nothing, whatever the quick run came to", () => {
+    const full = { ...reading, result: shifted(-0.07), isCurrent: false };
+    const { edited, settled } = shown({ full, live: reading, liveBase: reading });
+    expect(edited?.atRisk.value).toBeCloseTo(settled!.atRisk.value, 12);
+    expect(edited).toMatchObject({ moneyTiedUp: 0, costPerYear: 0 });
   });
 });
