@@ -23,7 +23,7 @@ export function authOptions() {
     baseURL: baseUrl(),
     telemetry: { enabled: false },
     logger: { level: env.isTest ? "error" : "warn" },
-    emailAndPassword: { enabled: true, minPasswordLength: leastPasswordLength, maxPasswordLength: 200 },
+    emailAndPassword: { enabled: true, minPasswordLength: leastPasswordLength, maxPasswordLength: 128 },
     rateLimit: {
       enabled: !env.isTest,
       storage: "database",

@@ -70,7 +70,7 @@ describe("openDatabase", () => {
     const second = await openDatabase();
     expect(await second.db.select().from(organization)).toHaveLength(1);
     await second.close();
-  });
+  }, 240_000);
 });
 
 describe("authSecret", () => {

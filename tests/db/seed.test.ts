@@ -21,7 +21,7 @@ const hash = async (password: string) => `hash of ${password}`;
 beforeAll(async () => {
   db = await emptyDatabase();
   await seedDemo(db, accounts, hash);
-});
+}, 300_000);
 
 async function asEngineer(): Promise<Ctx> {
   const [{ id: workspaceId }] = await db.select().from(organization);

@@ -87,7 +87,7 @@ describe("createShare", () => {
     const otherScenario = other.scenarios[0].id;
     await storeResult(ctx, { scenarioId: otherScenario, ...runDocument(smallLine("Charger line"), shortRun) });
     const { kept } = await getScenario(ctx, otherScenario);
-    const both = { kind: "comparison", versionIds: [versionId, kept.id], days: 30 } as const;
+    const both = { kind: "comparison" as const, versionIds: [versionId, kept.id], days: 30 };
 
     await expect(createShare(ctx, both)).rejects.toMatchObject({ code: "invalid" });
     await expect(createShare(stranger, { ...both, versionIds: [versionId] })).rejects.toMatchObject({

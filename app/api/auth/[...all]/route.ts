@@ -4,18 +4,13 @@ import { requireSameOrigin } from "@/lib/auth/same-origin";
 import { AppError } from "@/lib/errors";
 
 /** What the pages use. The library serves much more, also for members and workspaces, past our table of rights. */
-const open: Record<string, readonly string[]> = {
-  GET: ["get-session"],
-  POST: ["sign-in/email", "sign-up/email", "sign-out"],
-};
+const open = ["sign-in/email", "sign-up/email", "sign-out"];
 
-async function handle(request: Request, { params }: { params: Promise<{ all: string[] }> }) {
+export async function POST(request: Request, { params }: { params: Promise<{ all: string[] }> }) {
   return answerErrors(async () => {
     const path = (await params).all.join("/");
-    if (!open[request.method]?.includes(path)) throw new AppError("not-found", "There is no such address.");
-    if (request.method !== "GET") requireSameOrigin(request);
+    if (!open.includes(path)) throw new AppError("not-found", "There is no such address.");
+    requireSameOrigin(request);
     return (await getAuth()).handler(request);
   });
 }
-
-export { handle as GET, handle as POST };
