@@ -2,20 +2,19 @@
 
 import { Popover } from "radix-ui";
 import { useLine } from "@/lib/client/line-state";
+import type { Caution } from "@/lib/line/cautions";
+import type { Fault } from "@/lib/line/types";
+import { describeAbout, idsOf } from "./fault-text";
 
-type Item = { message: string; ids: string[] };
+type Item = { text: string; ids: string[] };
 
 /** "Checked: no faults, 1 caution", with the list behind it; an item selects what it is about. */
 export function Checks() {
-  const { faults, cautions, select } = useLine();
+  const { document, faults, cautions, select } = useLine();
   const nothing = faults.length + cautions.length === 0;
   const text = `Checked: ${count(faults.length, "fault")}, ${count(cautions.length, "caution")}`;
   if (nothing) return <span className="text-s whitespace-nowrap text-ink-3">{text}</span>;
-  const faultItems = faults.map(({ message, node, link }): Item => ({
-    message,
-    ids: node ? [node] : link ? [`${link.from}>${link.to}`] : [],
-  }));
-  const cautionItems = cautions.map(({ message, node }): Item => ({ message, ids: node ? [node] : [] }));
+  const toItem = (about: Fault | Caution): Item => ({ text: describeAbout(about, document), ids: idsOf(about) });
   return (
     <Popover.Root>
       <Popover.Trigger
@@ -35,11 +34,11 @@ export function Checks() {
         >
           <List
             title="Faults: the line cannot run before they are put right"
-            items={faultItems}
+            items={faults.map(toItem)}
             isFault
             onPick={select}
           />
-          <List title="Cautions: it runs, but look at these" items={cautionItems} onPick={select} />
+          <List title="Cautions: it runs, but look at these" items={cautions.map(toItem)} onPick={select} />
         </Popover.Content>
       </Popover.Portal>
     </Popover.Root>
@@ -54,17 +53,17 @@ function List({ title, items, isFault = false, onPick }: ListProps) {
     <section className="not-first:mt-4">
       <h3 className="mb-1 border-b border-ink pb-1 text-s font-semibold">{title}</h3>
       <ul>
-        {items.map(({ message, ids }, i) => (
+        {items.map(({ text, ids }, i) => (
           <li key={i} className="border-b border-rule last:border-b-0">
             {ids.length > 0 ? (
               <Popover.Close
                 className={`w-full py-1.5 text-left text-m hover:bg-water-50 ${isFault ? "text-silt-700" : ""}`}
                 onClick={() => onPick(ids)}
               >
-                {message}
+                {text}
               </Popover.Close>
             ) : (
-              <p className={`py-1.5 text-m ${isFault ? "text-silt-700" : ""}`}>{message}</p>
+              <p className={`py-1.5 text-m ${isFault ? "text-silt-700" : ""}`}>{text}</p>
             )}
           </li>
         ))}

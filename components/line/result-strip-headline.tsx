@@ -3,8 +3,9 @@
 import { Progress } from "@/components/ui/progress";
 import { useLine } from "@/lib/client/line-state";
 import { formatPercent } from "@/lib/format";
+import { describeAbout, idsOf } from "./fault-text";
 import { figuresOf, type StripReading } from "./strip-reading";
-import { announce, describeFaults, describePoints, describeSource, describeWeeks, sayFigures } from "./strip-text";
+import { announce, describeFaults, describePoints, describeWeeks, sayFigures } from "./strip-text";
 
 /** The sentence first: what is shipped in so many weeks of ten, and what the last edit does to it. */
 export function ResultStripHeadline({ reading }: { reading: StripReading }) {
@@ -27,7 +28,9 @@ function Sentence({ reading: { settled, live, edited } }: { reading: StripReadin
     const points = describePoints(settled.atRisk);
     return (
       <>
-        <Caption parts={[describeSource(scenario.name, settled.of), risk, points && `${points} points`]} />
+        <Caption
+          parts={[scenario.name, settled.of === "before" && "last full run", risk, points && `${points} points`]}
+        />
         <Say {...sayFigures(settled)} />
         <Second edited={edited} live={live} of={settled.of} />
       </>
@@ -84,23 +87,20 @@ type Of = NonNullable<StripReading["settled"]>["of"];
 
 /** The line below the sentence: trouble first, then what the edit does. */
 function Second({ edited, live, of }: Pick<StripReading, "edited" | "live"> & { of: Of | null }) {
-  const { faults, runError, isLiveRunning, select } = useLine();
+  const { document, faults, runError, isLiveRunning, select } = useLine();
   if (runError) return <p className="mt-1 border-l-[3px] border-silt-600 pl-2 text-m text-silt-700">{runError}</p>;
   if (faults.length > 0) {
-    const [{ message, node }] = faults;
+    const ids = idsOf(faults[0]);
+    const text = describeAbout(faults[0], document);
     return (
       <p className="mt-1 flex min-w-0 gap-1.5 text-m text-silt-700">
         <b className="font-[620] whitespace-nowrap">Cannot run: {describeFaults(faults.length)}.</b>
-        {node ? (
-          <button
-            type="button"
-            className="truncate text-left underline underline-offset-3"
-            onClick={() => select([node])}
-          >
-            {message}
+        {ids.length > 0 ? (
+          <button type="button" className="truncate text-left underline underline-offset-3" onClick={() => select(ids)}>
+            {text}
           </button>
         ) : (
-          <span className="truncate">{message}</span>
+          <span className="truncate">{text}</span>
         )}
       </p>
     );
@@ -134,7 +134,7 @@ function Say({ before, value, after }: { before: string; value: string; after: s
   );
 }
 
-function Caption({ parts }: { parts: (string | null)[] }) {
+function Caption({ parts }: { parts: (string | null | false)[] }) {
   return <p className="mb-[3px] truncate text-s text-ink-2">{parts.filter(Boolean).join(" · ")}</p>;
 }
 

@@ -98,7 +98,7 @@ export function RunDetails() {
           </p>
           <div className="grid gap-2.5">
             {fields.map(({ label, unit, hint, show, read, range }) => (
-              <div key={label} className="grid grid-cols-[9rem_1fr] items-center gap-3">
+              <div key={label} className="grid grid-cols-[9rem_1fr] items-start gap-3">
                 <StripField
                   label={unit === "%" ? `${label}, %` : label}
                   value={show(options)}
@@ -114,7 +114,7 @@ export function RunDetails() {
                     return null;
                   }}
                 />
-                <p className="text-s text-ink-3">{hint}</p>
+                <p className="pt-5 text-s text-ink-3">{hint}</p>
               </div>
             ))}
           </div>

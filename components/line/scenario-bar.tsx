@@ -13,7 +13,7 @@ import { UndoButtons } from "./undo-buttons";
 export function ScenarioBar() {
   const { mayEdit, nEditsNotKept } = useLine();
   return (
-    <div className="flex min-h-[47px] shrink-0 items-center gap-2.5 overflow-x-auto border-b border-rule px-3 py-1.5 sm:px-[18px] print:hidden">
+    <div className="flex min-h-[47px] shrink-0 flex-wrap items-center gap-x-2.5 gap-y-1.5 border-b border-rule px-3 py-1.5 sm:px-[18px] print:hidden">
       <ScenarioPick />
       <ScenarioMenu />
       {mayEdit && nEditsNotKept > 0 && (
@@ -24,7 +24,7 @@ export function ScenarioBar() {
       <span aria-hidden className="mx-1 h-5 w-px shrink-0 bg-rule" />
       <BarSlot name="tools" />
       {mayEdit && <UndoButtons />}
-      <span className="ml-auto flex shrink-0 items-center gap-2.5">
+      <span className="flex flex-wrap items-center gap-x-2.5 gap-y-1.5 lg:ml-auto">
         <Checks />
         <BarSlot name="end" />
         {mayEdit && <KeepControls />}

@@ -8,7 +8,7 @@ import { formatPercent } from "@/lib/format";
 export function ScenarioPick() {
   const { line, scenario, selectScenario, isSwitching } = useLine();
   return (
-    <span aria-busy={isSwitching} className="min-w-0">
+    <span aria-busy={isSwitching} className="max-w-[calc(100vw-80px)] min-w-0 shrink-0 lg:max-w-72">
       <Pick
         label="Scenario"
         value={scenario.id}

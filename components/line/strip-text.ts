@@ -1,19 +1,13 @@
 import { formatCount, formatNumber, formatPercent, headlineSentence, plural, spreadText } from "@/lib/format";
 import type { LineState } from "@/lib/client/line-state";
 import type { Figure } from "@/lib/simulation/types";
-import type { StripFigures, StripReading } from "./strip-reading";
+import type { StripFigures } from "./strip-reading";
 
 /** Half-width of a share in points, "± 0.7"; a share that came out 0 or 1 has a bound instead. */
 export function describePoints({ halfWidth, value, bound }: Figure): string | null {
   if (halfWidth !== null) return spreadText(formatNumber(halfWidth * 100, 1));
   if (bound === undefined) return null;
   return value === 0 ? `below ${formatPercent(bound, 1)}` : `above ${formatPercent(bound, 1)}`;
-}
-
-/** What the headline speaks of: the scenario, and which of its states. */
-export function describeSource(name: string, of: NonNullable<StripReading["settled"]>["of"]): string {
-  if (of === "before") return `${name}, as last run`;
-  return name;
 }
 
 export function describeWeeks(weeks: number): string {

@@ -103,7 +103,7 @@ describe("ResultStrip", () => {
     );
     expect(strip()).toHaveTextContent("Cannot run: 1 fault.");
     expect(screen.getByRole("button", { name: /Run 12 weeks/ })).toBeDisabled();
-    await user.click(within(strip()).getByRole("button", { name: line.faults[0].message }));
+    await user.click(within(strip()).getByRole("button", { name: `${station.name}: ${line.faults[0].message}` }));
     expect(line.selection).toEqual([station.id]);
   });
 
