@@ -35,15 +35,21 @@ export function KeepControls() {
         </span>
       )}
       {hasEdits && (
-        <Button kind="plain" size="small" onClick={revertNow}>
+        <Button kind="plain" size="small" className="max-sm:hidden" onClick={revertNow}>
           Revert
         </Button>
       )}
-      <Button size="small" onClick={() => setNaming(true)}>
+      <Button size="small" className="max-sm:hidden" onClick={() => setNaming(true)}>
         Save as scenario
       </Button>
       {hasEdits && (
-        <Button kind="main" size="small" disabled={isKeeping} onClick={() => void keepNow()}>
+        <Button
+          kind="main"
+          size="small"
+          className="max-sm:min-h-11"
+          disabled={isKeeping}
+          onClick={() => void keepNow()}
+        >
           <span className="max-w-40 truncate">Keep in {scenario.name}</span>
         </Button>
       )}

@@ -49,7 +49,14 @@ function NameForm({ action, initialName, onClose, submit }: Omit<Props, "isOpen"
 
   return (
     <form onSubmit={(event) => void send(event)} className="mt-4" noValidate>
-      <TextField label="Name" value={name} onChange={setName} error={error ?? undefined} autoFocus />
+      <TextField
+        label="Name"
+        value={name}
+        onChange={setName}
+        error={error ?? undefined}
+        autoFocus
+        onFocus={({ target }) => target.select()}
+      />
       <DialogAnswers>
         <Button onClick={onClose}>Cancel</Button>
         <Button type="submit" kind="main" disabled={isBusy}>

@@ -21,7 +21,7 @@ export function ScenarioBar() {
           {nEditsNotKept} {nEditsNotKept === 1 ? "edit" : "edits"} not kept
         </Tag>
       )}
-      <span aria-hidden className="mx-1 h-5 w-px shrink-0 bg-rule" />
+      <span aria-hidden className="mx-1 h-5 w-px shrink-0 bg-rule max-lg:hidden" />
       <BarSlot name="tools" />
       {mayEdit && <UndoButtons />}
       <span className="flex flex-wrap items-center gap-x-2.5 gap-y-1.5 lg:ml-auto">
