@@ -77,7 +77,7 @@ export type LineState = {
   /** Brings document, layout, notes and options of a kept version into the draft as one edit. */
   bringBack(version: VersionDetail): void;
 
-  /** Ids of the selected nodes and "from>to" keys of selected links. */
+  /** Ids of the selected nodes and notes, and "from>to" keys of selected links. */
   selection: readonly string[];
   select(ids: readonly string[]): void;
 

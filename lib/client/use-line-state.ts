@@ -51,7 +51,7 @@ export function useLineState({ line, scenario, isSwitching, select, actions }: S
     options,
     isLiveWanted && reading.parsed !== null,
   );
-  const [selection, setSelection] = useSelection(scenario.id, document);
+  const [selection, setSelection] = useSelection(scenario.id, document, notes);
 
   const apply = useCallback(
     (edit: Edit, coalesce?: string) =>

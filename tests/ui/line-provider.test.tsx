@@ -152,6 +152,25 @@ describe("LineProvider", () => {
     expect(line.full?.isCurrent).toBe(true);
   });
 
+  it("selects nodes, links and notes, and lets go of what an undo takes away", () => {
+    serve(createRoutes("engineer", [createScenario()]));
+    renderLine({ children: <Probe /> });
+    const note = {
+      id: "note-1",
+      x: 0,
+      y: 0,
+      text: "Ask for a second source",
+      author: "Ines Kallweit",
+      at: "2026-11-24T14:02:00Z",
+    };
+    act(() => line.apply({ label: "Add a note", apply: (state) => ({ ...state, notes: [note] }) }));
+    const [{ from, to }] = exampleDocument.links;
+    act(() => line.select([from, `${from}>${to}`, "note-1"]));
+    expect(line.selection).toEqual([from, `${from}>${to}`, "note-1"]);
+    act(() => line.undo());
+    expect(line.selection).toEqual([from, `${from}>${to}`]);
+  });
+
   it("stores a full run with the scenario, and says so when that fails", async () => {
     const asked = serve({
       ...createRoutes("engineer", [createScenario()]),
