@@ -66,7 +66,7 @@ export async function getLine(ctx: Ctx, lineId: string): Promise<LineDetail> {
   const [row] = await ctx.db.select({ id, name, workspaceId }).from(line).where(isLine(ctx, lineId));
   if (!row) throw missing();
   const workspaceName = await getWorkspaceName(ctx.db, ctx.workspaceId);
-  return { ...row, workspaceName, role: ctx.role, scenarios: await listScenarios(ctx, lineId) };
+  return { ...row, workspaceName, role: ctx.role, userName: ctx.userName, scenarios: await listScenarios(ctx, lineId) };
 }
 
 export type NewLine = { name: string; sheet: Omit<Content, "options">; options?: Content["options"] };
