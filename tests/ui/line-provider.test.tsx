@@ -1,5 +1,6 @@
 import { act, screen, waitFor } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
+import { useLayoutEffect } from "react";
 import { beforeEach, describe, expect, it, vi } from "vitest";
 import { useLine, type LineState } from "@/lib/client/line-state";
 import type { Edit } from "@/lib/line/edits";
@@ -26,7 +27,10 @@ vi.mock("next/navigation", () => ({
 
 let line: LineState;
 function Probe() {
-  line = useLine();
+  const state = useLine();
+  useLayoutEffect(() => {
+    line = state;
+  });
   return (
     <>
       <output>{line.document.name}</output>

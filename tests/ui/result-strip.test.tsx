@@ -1,5 +1,6 @@
 import { act, screen, waitFor, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
+import { useLayoutEffect } from "react";
 import { describe, expect, it, vi } from "vitest";
 import { ResultStrip } from "@/components/line/result-strip";
 import { useLine, type LineState } from "@/lib/client/line-state";
@@ -23,7 +24,10 @@ vi.mock("next/navigation", () => ({
 
 let line: LineState;
 function Probe() {
-  line = useLine();
+  const state = useLine();
+  useLayoutEffect(() => {
+    line = state;
+  });
   return <ResultStrip />;
 }
 

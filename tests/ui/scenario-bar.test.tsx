@@ -1,5 +1,6 @@
 import { act, screen, waitFor, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
+import { useLayoutEffect } from "react";
 import { describe, expect, it, vi } from "vitest";
 import { BarSlots, BarTools } from "@/components/line/bar-slot";
 import { ScenarioBar } from "@/components/line/scenario-bar";
@@ -25,7 +26,10 @@ vi.mock("next/navigation", () => ({
 
 let line: LineState;
 function Probe() {
-  line = useLine();
+  const state = useLine();
+  useLayoutEffect(() => {
+    line = state;
+  });
   return (
     <BarSlots>
       <ScenarioBar />
