@@ -33,7 +33,7 @@ function Probe() {
   });
   return (
     <>
-      <output>{line.document.name}</output>
+      <output>{state.document.name}</output>
       <input aria-label="Some field" />
     </>
   );
