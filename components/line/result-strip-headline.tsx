@@ -3,6 +3,7 @@
 import { Progress } from "@/components/ui/progress";
 import { useLine } from "@/lib/client/line-state";
 import { formatPercent } from "@/lib/format";
+import { engineVersion } from "@/lib/simulation/engine";
 import { describeAbout, idsOf } from "./fault-text";
 import { figuresOf, type StripReading } from "./strip-reading";
 import { announce, describeFaults, describePoints, describeWeeks, sayFigures } from "./strip-text";
@@ -21,15 +22,22 @@ export function ResultStripHeadline({ reading }: { reading: StripReading }) {
 }
 
 function Sentence({ reading: { settled, live, edited } }: { reading: StripReading }) {
-  const { scenario, progress, faults, isLiveRunning, options } = useLine();
+  const { scenario, progress, faults, isLiveRunning, options, full } = useLine();
   const risk = `accepted risk ${formatPercent(options.acceptedRisk, 0)}`;
   if (progress) return <Running risk={risk} />;
   if (settled) {
     const points = describePoints(settled.atRisk);
+    const isOld = full !== null && full.engine !== engineVersion;
     return (
       <>
         <Caption
-          parts={[scenario.name, settled.of === "before" && "last full run", risk, points && `${points} points`]}
+          parts={[
+            scenario.name,
+            settled.of === "before" && "last full run",
+            isOld && `made by engine ${full.engine}`,
+            risk,
+            points && `${points} points`,
+          ]}
         />
         <Say {...sayFigures(settled)} />
         <Second edited={edited} live={live} of={settled.of} />

@@ -64,6 +64,7 @@ export function createDetail(role: Role, scenarios: ScenarioDetail[]): LineDetai
     name: "Drive unit line",
     workspaceId: "w-1",
     workspaceName: "Larkfield Drives",
+    userName: by,
     role,
     scenarios: scenarios.map(({ id, name, isBase }) => ({
       id,

@@ -94,6 +94,28 @@ describe("LineProvider", () => {
     expect(JSON.parse(String(saves[0].init?.body))).toMatchObject({ revision: 1, document: { name: "Edited" } });
   });
 
+  it("warns of leaving only while something is unsaved, and sends it along", async () => {
+    const asked = serve(createRoutes("engineer", [createScenario()]));
+    renderLine({ children: <Probe /> });
+    const leave = () => {
+      const event = new Event("beforeunload", { cancelable: true });
+      window.dispatchEvent(event);
+      return event.defaultPrevented;
+    };
+    expect(leave()).toBe(false);
+    act(() =>
+      line.apply({
+        label: "Empty it",
+        apply: (state) => ({ ...state, document: { ...state.document, nodes: [], links: [] } }),
+      }),
+    );
+    expect(leave()).toBe(true);
+    await act(async () => window.dispatchEvent(new Event("pagehide")));
+    const [save] = asked.filter(({ route }) => route.startsWith("PUT"));
+    expect(save.init?.keepalive).toBe(true);
+    await waitFor(() => expect(leave()).toBe(false));
+  });
+
   it("changes and saves nothing for a viewer, who may still run", async () => {
     const asked = serve(createRoutes("viewer", [createScenario()]));
     renderLine({ role: "viewer", children: <Probe /> });

@@ -115,6 +115,28 @@ describe("ScenarioBar", () => {
     expect(line.selection).toEqual([fault.node]);
   });
 
+  it("imports a file as one edit that can be undone", async () => {
+    const { user } = show();
+    const text = JSON.stringify({ ...exampleDocument, name: "Another plant" });
+    await user.upload(
+      screen.getByLabelText("Line file"),
+      new File([text], "another.json", { type: "application/json" }),
+    );
+    await waitFor(() => expect(line.document.name).toBe("Another plant"));
+    expect(line.undoLabel).toBe("Import another.json");
+    act(() => line.undo());
+    expect(line.document.name).toBe("Drive unit line");
+  });
+
+  it("says what is wrong with a file and changes nothing", async () => {
+    const { user } = show();
+    await user.upload(screen.getByLabelText("Line file"), new File(["{"], "broken.json", { type: "application/json" }));
+    const dialog = await screen.findByRole("dialog");
+    expect(dialog).toHaveTextContent("broken.json was not imported");
+    expect(dialog).toHaveTextContent(/is not a JSON file.*Nothing was changed\./);
+    expect(line.canUndo).toBe(false);
+  });
+
   it("has a place for the tools of the view", () => {
     show();
     expect(screen.getByRole("button", { name: "A tool of the view" })).toBeInTheDocument();
