@@ -78,6 +78,8 @@ export type LineDetail = {
   workspaceId: string;
   workspaceName: string;
   role: Role;
+  /** Who reads this: notes are signed with it. */
+  userName: string;
   scenarios: ScenarioSummary[];
 };
 
