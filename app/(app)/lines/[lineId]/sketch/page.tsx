@@ -1,0 +1,5 @@
+import { SketchView } from "@/components/line/sketch-view";
+
+export default function SketchPage() {
+  return <SketchView />;
+}
