@@ -40,7 +40,7 @@ function Sentence({ reading: { settled, live, edited } }: { reading: StripReadin
           ]}
         />
         <Say {...sayFigures(settled)} />
-        <Second edited={edited} live={live} of={settled.of} />
+        <Second edited={edited} live={live} source={settled.of} />
       </>
     );
   }
@@ -52,7 +52,7 @@ function Sentence({ reading: { settled, live, edited } }: { reading: StripReadin
           parts={[scenario.name, `live reading, ${describeWeeks(live.weeks)}`, risk, points && `${points} points`]}
         />
         <Say {...sayFigures(live, true)} />
-        <Second edited={null} live={null} of={null} />
+        <Second edited={null} live={null} source={null} />
       </>
     );
   }
@@ -60,7 +60,7 @@ function Sentence({ reading: { settled, live, edited } }: { reading: StripReadin
     <>
       <Caption parts={[scenario.name, risk]} />
       <p className={say}>{faults.length > 0 ? "This line cannot run yet." : "Not run yet."}</p>
-      {isLiveRunning ? <Pulse text="Taking a first reading" /> : <Second edited={null} live={null} of={null} />}
+      {isLiveRunning ? <Pulse text="Taking a first reading" /> : <Second edited={null} live={null} source={null} />}
     </>
   );
 }
@@ -91,10 +91,10 @@ function Running({ risk }: { risk: string }) {
   );
 }
 
-type Of = NonNullable<StripReading["settled"]>["of"];
+type Source = NonNullable<StripReading["settled"]>["of"];
 
 /** The line below the sentence: trouble first, then what the edit does. */
-function Second({ edited, live, of }: Pick<StripReading, "edited" | "live"> & { of: Of | null }) {
+function Second({ edited, live, source }: Pick<StripReading, "edited" | "live"> & { source: Source | null }) {
   const { document, faults, runError, isLiveRunning, select } = useLine();
   if (runError) return <p className="mt-1 border-l-[3px] border-silt-600 pl-2 text-m text-silt-700">{runError}</p>;
   if (faults.length > 0) {
@@ -113,8 +113,8 @@ function Second({ edited, live, of }: Pick<StripReading, "edited" | "live"> & { 
       </p>
     );
   }
-  if (of === "now") return null;
-  if (of === null) return <p className="mt-1 text-m text-ink-2">Not run in full yet.</p>;
+  if (source === "now") return null;
+  if (source === null) return <p className="mt-1 text-m text-ink-2">Not run in full yet.</p>;
   const now = edited ?? live;
   if (!now) return isLiveRunning ? <Pulse text="Reading your edit" /> : null;
   if (!edited && isLiveRunning) return <Pulse text="Reading your edit" />;
