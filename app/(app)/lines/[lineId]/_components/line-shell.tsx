@@ -6,14 +6,17 @@ import { LineMasthead } from "@/components/line/line-masthead";
 import { ResultStrip } from "@/components/line/result-strip";
 import { ScenarioBar } from "@/components/line/scenario-bar";
 import { StaleDialog } from "@/components/line/stale-dialog";
+import { ShareActionsContext } from "@/components/share/share-actions";
 import { LineProvider } from "@/lib/client/line-provider";
 import { SimulationProvider } from "@/lib/client/use-simulation";
 import type { LineDetail, ScenarioDetail } from "@/lib/schema/lines";
 import {
+  createShareAction,
   deleteScenarioAction,
   keepVersionAction,
   markBaseAction,
   renameScenarioAction,
+  revokeShareAction,
   saveAsScenarioAction,
 } from "../actions";
 import { LineAway } from "./line-away";
@@ -28,6 +31,8 @@ const actions = {
   markBase: markBaseAction,
 };
 
+const shareActions = { createShare: createShareAction, revokeShare: revokeShareAction };
+
 /** The frame of all views of a line: masthead, scenario bar, the view, result strip. */
 export function LineShell({ line, initial, userName, children }: Props) {
   return (
@@ -38,17 +43,19 @@ export function LineShell({ line, initial, userName, children }: Props) {
         actions={actions}
         whileAway={(state) => <LineAway lineName={line.name} {...state} />}
       >
-        <BarSlots>
-          <div className="flex h-dvh flex-col overflow-hidden print:block print:h-auto print:overflow-visible">
-            <LineMasthead userName={userName} />
-            <ScenarioBar />
-            <main id="main" className="relative flex min-h-0 flex-1 flex-col overflow-auto print:overflow-visible">
-              {children}
-            </main>
-            <ResultStrip />
-          </div>
-          <StaleDialog />
-        </BarSlots>
+        <ShareActionsContext value={shareActions}>
+          <BarSlots>
+            <div className="flex h-dvh flex-col overflow-hidden print:block print:h-auto print:overflow-visible">
+              <LineMasthead userName={userName} />
+              <ScenarioBar />
+              <main id="main" className="relative flex min-h-0 flex-1 flex-col overflow-auto print:overflow-visible">
+                {children}
+              </main>
+              <ResultStrip />
+            </div>
+            <StaleDialog />
+          </BarSlots>
+        </ShareActionsContext>
       </LineProvider>
     </SimulationProvider>
   );
