@@ -2,7 +2,7 @@ import { and, desc, eq, isNull, notExists, notInArray } from "drizzle-orm";
 import { AppError } from "@/lib/errors";
 import type { DraftLine } from "@/lib/line/types";
 import type { ReadingSummary, ScenarioOptions } from "@/lib/schema/lines";
-import { decodeResult, engineVersion, percentile } from "@/lib/simulation";
+import { decodeResult, encodeResult, engineVersion, mergeRuns, percentile } from "@/lib/simulation";
 import type { RunResult } from "@/lib/simulation/types";
 import type { Ctx, Db } from "../context";
 import { result, resultData, scenario, scenarioVersion } from "../schema";
@@ -22,11 +22,12 @@ export async function getResultBytes(ctx: Ctx, resultId: string): Promise<Uint8A
 
 type Target = { document: DraftLine; options: ScenarioOptions; digest: string | null; optionsKey: string };
 
-function decode(bytes: Uint8Array): RunResult {
+/** Bytes from outside whose parts contradict one another can end in either. */
+function readOrRefuse(read: () => RunResult): RunResult {
   try {
-    return decodeResult(bytes);
+    return read();
   } catch (error) {
-    if (!(error instanceof RangeError)) throw error;
+    if (!(error instanceof RangeError || error instanceof TypeError)) throw error;
     throw new AppError("invalid", `The result cannot be read: ${error.message}`);
   }
 }
@@ -73,14 +74,16 @@ export async function storeResult(
   ctx: Ctx,
   { scenarioId, digest, bytes }: { scenarioId: string; digest: string; bytes: Uint8Array },
 ): Promise<ReadingSummary> {
-  const run = decode(bytes);
-  if (run.engine !== engineVersion) {
+  const sent = readOrRefuse(() => decodeResult(bytes));
+  if (sent.engine !== engineVersion) {
     throw new AppError(
       "conflict",
-      `This result is of engine ${run.engine}, the server has ${engineVersion}. Reload the page.`,
+      `This result is of engine ${sent.engine}, the server has ${engineVersion}. Reload the page.`,
     );
   }
-  const compressed = await compress(bytes);
+  // Figures are computed anew from the tallies, so that none has to be believed; an honest result keeps its bits.
+  const run = readOrRefuse(() => mergeRuns([sent]));
+  const compressed = await compress(encodeResult(run));
   return ctx.db.transaction(async (tx) => {
     const { lineId, targets } = await listTargets(ctx, tx, scenarioId);
     const target = findTarget(targets, digest, run);

@@ -128,6 +128,15 @@ describe("storeResult", () => {
     await expect(storeResult(ctx, { scenarioId, digest, bytes: old })).rejects.toMatchObject({ code: "conflict" });
   });
 
+  it("does not believe figures that the tallies do not bear out", async () => {
+    const forged = encodeResult({ ...run, summary: { ...run.summary, risk: { value: 0, halfWidth: 0 } } });
+
+    const { resultId, risk } = await storeResult(ctx, { scenarioId, digest, bytes: forged });
+
+    expect(risk).toEqual(run.summary.risk);
+    expect(await getResultBytes(ctx, resultId)).toEqual(bytes);
+  });
+
   it("refuses damaged bytes", async () => {
     await expect(storeResult(ctx, { scenarioId, digest, bytes: bytes.slice(0, 100) })).rejects.toMatchObject({
       code: "invalid",
