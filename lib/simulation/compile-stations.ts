@@ -1,0 +1,67 @@
+import type { Line, Stoppages } from "@/lib/line/types";
+import type { Purpose } from "@/lib/random/streams";
+import { getWorkTable } from "@/lib/random/work-table";
+import type { Graph } from "./graph";
+import { amt, amtStride, blockLength, bufStride, sta, staStride, type Model, type StationModel } from "./model";
+
+/** Stations in the order of service, with their records as they stand at the start of a replication. */
+export function compileStations(
+  line: Line,
+  graph: Graph,
+  causeAt: (node: string) => number,
+  addStream: (node: string, purpose: Purpose) => number,
+): Pick<Model, "stations" | "inputs" | "stationStart" | "amountStart"> {
+  const { tickMinutes } = line.calendar;
+  const stations: StationModel[] = [];
+  const inputs: number[] = [];
+  const stationStart = new Int32Array(graph.stations.length * staStride);
+  const amountStart = new Float64Array(graph.stations.length * amtStride);
+  graph.serviceOrder.forEach((index, position) => {
+    const node = graph.stations[index];
+    stations.push({
+      index,
+      work: node.cycleMinutes / tickMinutes,
+      table: node.cycleCv > 0 ? getWorkTable(node.cycleCv) : null,
+      scrapRate: node.scrapRate,
+      stoppages: node.stoppages && describeStoppages(node.stoppages, tickMinutes),
+      streams: {
+        work: addStream(node.id, "work"),
+        scrap: addStream(node.id, "scrap"),
+        stoppage: addStream(node.id, "stoppage"),
+      },
+    });
+    const at = position * staStride;
+    const output = graph.stationOutput[index];
+    stationStart[at + sta.next] = position * blockLength;
+    stationStart[at + sta.end] = (position + 1) * blockLength;
+    stationStart[at + sta.out] = output * bufStride;
+    stationStart[at + sta.inputs] = inputs.length;
+    for (const { buffer, quantity } of graph.stationInputs[index]) inputs.push(buffer * bufStride, quantity);
+    stationStart[at + sta.inputsEnd] = inputs.length;
+    stationStart[at + sta.lostTick] = -2;
+    stationStart[at + sta.always] = node.stoppages && isAlways(node.stoppages) ? 1 : 0;
+    stationStart[at + sta.isCharged] = graph.customerBuffer.includes(output) ? 1 : 0;
+    stationStart[at + sta.cause] = causeAt(node.id);
+    amountStart[position * amtStride + amt.speed] = node.parallel;
+  });
+  return { stations, inputs: Int32Array.from(inputs), stationStart, amountStart };
+}
+
+function isAlways(stoppages: Stoppages): boolean {
+  return stoppages.pattern === "perTick" || stoppages.clock === "always";
+}
+
+/** Ticks that are up independently of each other make geometric runs; the model's mean below one tick counts as one. */
+function describeStoppages(stoppages: Stoppages, tickMinutes: number): StationModel["stoppages"] {
+  if (stoppages.pattern === "perTick") {
+    const up = stoppages.upProbability;
+    return up >= 1 ? null : { startsDown: 1 - up, upEnds: 1 - up, down: { ends: up } };
+  }
+  const meanDown = (stoppages.meanDownHours * 60) / tickMinutes;
+  return {
+    startsDown: 0,
+    upEnds: 1 / Math.max(1, (stoppages.meanUpHours * 60) / tickMinutes),
+    down:
+      stoppages.downCv === null ? { ends: 1 / Math.max(1, meanDown) } : { mean: meanDown, cv: stoppages.downCv },
+  };
+}

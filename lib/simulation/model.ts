@@ -1,0 +1,161 @@
+import type { Key, Purpose } from "@/lib/random/streams";
+import type { WholeQuantile } from "@/lib/random/whole-quantile";
+import type { WorkTable } from "@/lib/random/work-table";
+import type { Columns } from "./columns";
+import type { Shape } from "./tallies";
+
+/** Whole-number record of a buffer in `State.buffers`: where each field stands. */
+export const buf = {
+  level: 0,
+  /** Station-fed: places neither filled nor reserved. Purchased: size - level, negative above it. */
+  free: 1,
+  /** Tick of this stretch since whose end the level has been 0; means nothing while it is not. */
+  emptySince: 2,
+  /** The same for no free place. */
+  fullSince: 3,
+  /** Ticks of this stretch that ended empty, or full, and are over. */
+  empty: 4,
+  full: 5,
+  /** Purchased: today's cause of a shortage; -1: station-fed. */
+  cause: 6,
+  /** Station-fed: record of the first feeding station. */
+  feeder: 7,
+} as const;
+export const bufStride = 8;
+
+/** Whole-number record of a station in `State.stations`, in the order of service. */
+export const sta = {
+  /** Down ticks left; 0: up. */
+  down: 0,
+  /** Ticks of up-time left. */
+  up: 1,
+  /** The so many-th finished unit from here is scrap. */
+  scrap: 2,
+  /** Next work amount, an index of `State.work`, and the end of the station's block there. */
+  next: 3,
+  end: 4,
+  /** Record of the output buffer. */
+  out: 5,
+  /** Inputs: from and to in `Model.inputs`. */
+  inputs: 6,
+  inputsEnd: 7,
+  /** Tick of this stretch last lost by being down or by a missing input, -1 for the stretch's eve, less for none. */
+  lostTick: 8,
+  /** What was lost by: -1 down, else the record of the buffer that lacked. */
+  lostBy: 9,
+  /** 1: the clock of the up-time runs always. */
+  always: 10,
+  /** 1: feeds a buffer that customers draw on, so its losses are charged to causes. */
+  isCharged: 11,
+  /** Cause "down"; "pace" is the next. */
+  cause: 12,
+} as const;
+export const staStride = 13;
+
+/** Fractional record of a station in `State.amounts`. Areas are sums of tick numbers of this stretch. */
+export const amt = {
+  speed: 0,
+  /** Ticks of work left on the unit in work; 0: none in work. */
+  left: 1,
+  startArea: 2,
+  goodArea: 3,
+  blocked: 4,
+  down: 5,
+  scrapped: 6,
+  /** Sum of the scrap gaps drawn; finished units are this less what is left of the last gap. */
+  gaps: 7,
+} as const;
+export const amtStride = 8;
+
+/** Work amounts drawn at a time. */
+export const blockLength = 128;
+
+export type StationModel = {
+  /** Index in the document's stations. */
+  index: number;
+  /** Mean work of a unit, ticks. */
+  work: number;
+  /** Null: every unit takes the mean. */
+  table: WorkTable | null;
+  scrapRate: number;
+  /** Geometric times by the probability that a tick is the last; `startsDown`: of the very first tick. */
+  stoppages: null | {
+    startsDown: number;
+    upEnds: number;
+    down: { ends: number } | { mean: number; cv: number };
+  };
+  streams: { work: number; scrap: number; stoppage: number };
+};
+
+export type BufferModel = {
+  size: number;
+  startLevel: number;
+  isPurchased: boolean;
+  /** Of `reviewDays` etc. see the document; `lot` 0 means order up to. */
+  reviewDays: number;
+  lot: number;
+  minimumOrder: number;
+  orderMultiple: number;
+  /** Indices, in link order. */
+  suppliers: number[];
+  /** Record of the first feeding station in link order, -1 where suppliers feed the buffer. */
+  feeder: number;
+  /** Index in `Model.groups`, -1 where no customer draws. */
+  group: number;
+  sizeCause: number;
+};
+
+export type SupplierModel = {
+  buffer: number;
+  quotedDays: number;
+  /** Days from order to arrival of a delivery that is not on time; null: every delivery is on time. */
+  days: WholeQuantile | null;
+  onTimeShare: number;
+  correlation: number;
+  keepsSequence: boolean;
+  disruption: null | { begins: number; ends: number };
+  rejectRate: number;
+  lotRejectRate: number;
+  share: number;
+  /** Cause "disrupted"; "late" is the next. */
+  cause: number;
+  streams: { lateness: number; disruption: number; reject: number; lot: number };
+};
+
+export type CustomerModel = {
+  group: number;
+  demand: WholeQuantile;
+  correlation: number;
+  isWeekly: boolean;
+  isLost: boolean;
+  stream: number;
+};
+
+/** Customers of one buffer, in document order. */
+export type Group = { buffer: number; customers: Int32Array; isPurchased: boolean };
+
+/** A line made ready to run. Nothing in it changes during a run. */
+export type Model = {
+  shape: Shape;
+  columns: Columns;
+  ticksPerDay: number;
+  daysPerWeek: number;
+  overtimeTicks: number;
+  /** Units owed above which the next week has overtime; Infinity: never. */
+  overtimeTrigger: number;
+  suppliers: SupplierModel[];
+  buffers: BufferModel[];
+  /** In the order of service, downstream first. */
+  stations: StationModel[];
+  customers: CustomerModel[];
+  groups: Group[];
+  /** Pairs (record of the buffer, quantity), station after station. */
+  inputs: Int32Array;
+  /** `State.stations` and `State.amounts` at the start. */
+  stationStart: Int32Array;
+  amountStart: Float64Array;
+  /** One for each (node id, purpose), without the seed phrase. */
+  streams: { node: string; purpose: Purpose }[];
+};
+
+export type StreamKeys = Key[];

@@ -1,0 +1,16 @@
+import { addUnits, rateQuantiles, sectionWeeks } from "./rates";
+import type { Figure, RunResult } from "./types";
+
+/**
+ * Percentile of the weekly fill rates of the line or of one customer.
+ * @param p - 0..1: at least 1 - p of the weeks met or beat the value.
+ * @throws RangeError on another p and on an unknown customer.
+ */
+export function percentile(result: RunResult, p: number, customerId?: string): Figure {
+  if (!(p >= 0 && p <= 1)) throw new RangeError(`p must be from 0 to 1, got ${p}`);
+  const { tallies, options } = result;
+  const customer =
+    customerId === undefined ? -1 : tallies.shape.customers.findIndex((candidate) => candidate.id === customerId);
+  if (customerId !== undefined && customer === -1) throw new RangeError(`no customer has the id "${customerId}"`);
+  return rateQuantiles(sectionWeeks(addUnits(tallies, customer), options.targetFillRate), [p])[0];
+}

@@ -1,0 +1,69 @@
+import { nextGap, nextLognormalTicks, never } from "@/lib/random/gaps";
+import { nextUniform, wordsPerStream } from "@/lib/random/sfc32";
+import { fillWork } from "@/lib/random/work-table";
+import { amt, amtStride, blockLength, sta, staStride } from "./model";
+import type { State } from "./state";
+
+/** Draws with which a replication starts: first disruptions, rejects, work, scrap and up-times. */
+export function drawFirstGaps(s: State): void {
+  s.model.suppliers.forEach((supplier, i) => {
+    const { disruption, rejectRate, streams } = supplier;
+    s.disruptionGaps[i] = disruption
+      ? nextGap(s.streams, streams.disruption * wordsPerStream, disruption.begins)
+      : Infinity;
+    s.rejectGaps[i] =
+      rejectRate > 0 ? nextGap(s.streams, streams.reject * wordsPerStream, rejectRate) : Infinity;
+  });
+  s.model.stations.forEach((station, i) => {
+    const at = i * staStride;
+    refillWork(s, at);
+    s.stations[at + sta.scrap] = drawScrapGap(s, at);
+    const { stoppages } = station;
+    const stream = station.streams.stoppage * wordsPerStream;
+    const startsDown = stoppages && stoppages.startsDown > 0 && nextUniform(s.streams, stream) < stoppages.startsDown;
+    s.stations[at + sta.up] = startsDown ? 1 : drawUpTicks(s, at);
+    s.stations[at + sta.down] = startsDown ? drawDownTicks(s, at) : 0;
+  });
+}
+
+/** Draws the station's next block of work and returns the index of its first amount. */
+export function refillWork(s: State, at: number): number {
+  const station = s.model.stations[at / staStride];
+  const from = s.stations[at + sta.end] - blockLength;
+  if (station.table) {
+    const stream = station.streams.work * wordsPerStream;
+    fillWork(station.table, s.streams, stream, station.work, from, blockLength, s.work);
+  }
+  return from;
+}
+
+export function drawScrapGap(s: State, at: number): number {
+  const { scrapRate, streams } = s.model.stations[at / staStride];
+  return scrapRate > 0 ? nextGap(s.streams, streams.scrap * wordsPerStream, scrapRate) : never;
+}
+
+export function drawUpTicks(s: State, at: number): number {
+  const { stoppages, streams } = s.model.stations[at / staStride];
+  return stoppages ? nextGap(s.streams, streams.stoppage * wordsPerStream, stoppages.upEnds) : never;
+}
+
+/** 0 where the station never stops. */
+export function drawDownTicks(s: State, at: number): number {
+  const { stoppages, streams } = s.model.stations[at / staStride];
+  if (!stoppages) return 0;
+  const stream = streams.stoppage * wordsPerStream;
+  return "ends" in stoppages.down
+    ? nextGap(s.streams, stream, stoppages.down.ends)
+    : nextLognormalTicks(s.streams, stream, stoppages.down.mean, stoppages.down.cv);
+}
+
+/** The up-time is used up: the station is down from the next tick on. */
+export function stopStation(s: State, at: number): void {
+  s.stations[at + sta.down] = drawDownTicks(s, at);
+  s.stations[at + sta.up] = s.stations[at + sta.down] > 0 ? 1 : never;
+}
+
+/** Units finished since `clearCounts`, scrap included. */
+export function countFinished(s: State, at: number): number {
+  return s.amounts[(at / staStride) * amtStride + amt.gaps] - s.stations[at + sta.scrap];
+}
