@@ -1,4 +1,5 @@
 import { digestLine, parseLine } from "@/lib/line";
+import { describeAbout } from "@/lib/line/describe-fault";
 import type { DraftLine, Layout, Note } from "@/lib/line/types";
 import { AppError } from "@/lib/errors";
 import { documentBytes, draftBytes } from "@/lib/schema/line-inputs";
@@ -32,7 +33,7 @@ export function examineContent({ document, layout, notes, options }: Content) {
   const parsed = parseLine(document);
   const optionsKey = optionsKeyOf(options);
   if ("faults" in parsed) {
-    const faults = parsed.faults.slice(0, mostFaults).map(({ message }) => message);
+    const faults = parsed.faults.slice(0, mostFaults).map((fault) => describeAbout(fault, document));
     return { digest: null, optionsKey, faults };
   }
   return { digest: digestLine(parsed.line), optionsKey, faults: [] as string[] };

@@ -1,5 +1,6 @@
 export { decodeResult, encodeResult } from "./codec";
 export { engineVersion } from "./engine";
+export { judgeRuns, judgeWarmup, type RunsVerdict, type WarmupVerdict } from "./judge";
 export { lowestLevels, type LowestLevels } from "./lowest-levels";
 export { mergeRuns } from "./merge";
 export { percentile } from "./percentile";
