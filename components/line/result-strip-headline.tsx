@@ -51,7 +51,7 @@ function Sentence({ reading: { settled, live, edited } }: { reading: StripReadin
         <Caption
           parts={[scenario.name, `live reading, ${describeWeeks(live.weeks)}`, risk, points && `${points} points`]}
         />
-        <Say {...sayFigures(live, true)} />
+        <Say {...sayFigures(live, true)} isLive />
         <Second edited={null} live={null} source={null} />
       </>
     );
@@ -133,10 +133,14 @@ function Second({ edited, live, source }: Pick<StripReading, "edited" | "live"> 
 }
 
 const say = "text-l font-[330] tracking-[-.015em] text-balance lg:text-[21px]/7 min-[86.25rem]:text-2xl";
+/** A live reading says one word more and is set smaller, so that it stays on one line. */
+const sayLive = "text-l font-[330] tracking-[-.015em] text-balance lg:text-xl min-[86.25rem]:text-[21px]/7";
 
-function Say({ before, value, after }: { before: string; value: string; after: string }) {
+type SayProps = { before: string; value: string; after: string; isLive?: boolean };
+
+function Say({ before, value, after, isLive = false }: SayProps) {
   return (
-    <p className={say}>
+    <p className={isLive ? sayLive : say}>
       {before} <b className="font-bold whitespace-nowrap">{value}</b> {after}
     </p>
   );
