@@ -1,6 +1,7 @@
 "use client";
 
 import type { ReactNode } from "react";
+import { SweepProvider } from "@/components/compare/sweep-store";
 import { BarSlots } from "@/components/line/bar-slot";
 import { LineMasthead } from "@/components/line/line-masthead";
 import { ResultStrip } from "@/components/line/result-strip";
@@ -44,17 +45,19 @@ export function LineShell({ line, initial, userName, children }: Props) {
         whileAway={(state) => <LineAway lineName={line.name} {...state} />}
       >
         <ShareActionsContext value={shareActions}>
-          <BarSlots>
-            <div className="flex h-dvh flex-col overflow-hidden print:block print:h-auto print:overflow-visible">
-              <LineMasthead userName={userName} />
-              <ScenarioBar />
-              <main id="main" className="relative flex min-h-0 flex-1 flex-col overflow-auto print:overflow-visible">
-                {children}
-              </main>
-              <ResultStrip />
-            </div>
-            <StaleDialog />
-          </BarSlots>
+          <SweepProvider>
+            <BarSlots>
+              <div className="flex h-dvh flex-col overflow-hidden print:block print:h-auto print:overflow-visible">
+                <LineMasthead userName={userName} />
+                <ScenarioBar />
+                <main id="main" className="relative flex min-h-0 flex-1 flex-col overflow-auto print:overflow-visible">
+                  {children}
+                </main>
+                <ResultStrip />
+              </div>
+              <StaleDialog />
+            </BarSlots>
+          </SweepProvider>
         </ShareActionsContext>
       </LineProvider>
     </SimulationProvider>

@@ -1,0 +1,108 @@
+"use client";
+
+import { useEffect, useMemo, useRef, useState } from "react";
+import { FanChart } from "@/components/charts/fan-chart";
+import { Button } from "@/components/ui/button";
+import { ErrorLine } from "@/components/ui/error-line";
+import { Pick } from "@/components/ui/pick";
+import { type Reading, useLine } from "@/lib/client/line-state";
+import { useSimulation } from "@/lib/client/use-simulation";
+import { formatCount } from "@/lib/format";
+import { fanOf } from "./fan";
+
+type State =
+  | { status: "idle" }
+  | { status: "running"; share: number }
+  | { status: "done"; key: string; name: string; weeks: ReturnType<typeof fanOf> }
+  | { status: "failed"; message: string };
+
+/** Lowest stock of each week for one buffer, over the replications; run again from the seed when asked for. */
+export function LowestStock({ reading }: { reading: Reading }) {
+  const { parsed, digest } = useLine();
+  const client = useSimulation();
+  const buffers = useMemo(() => parsed?.nodes.filter((node) => node.kind === "buffer") ?? [], [parsed]);
+  const [wanted, setWanted] = useState<string | null>(null);
+  const [state, setState] = useState<State>({ status: "idle" });
+  const abort = useRef<AbortController | null>(null);
+  useEffect(() => () => abort.current?.abort(), []);
+  const buffer = buffers.find(({ id }) => id === wanted) ?? buffers[0];
+  if (!parsed || !buffer) return null;
+  const { warmupWeeks, ...rest } = reading.result.options;
+  const options = { warmupWeeks, ...rest };
+  const key = JSON.stringify([digest, options, buffer.id]);
+  const isOther = state.status === "done" && state.key !== key;
+
+  async function run() {
+    if (!parsed || !buffer) return;
+    abort.current?.abort();
+    const own = (abort.current = new AbortController());
+    setState({ status: "running", share: 0 });
+    try {
+      const levels = await client.lowestLevels(parsed, options, buffer.id, {
+        signal: own.signal,
+        onProgress: ({ replications, total }) => setState({ status: "running", share: replications / total }),
+      });
+      setState({ status: "done", key, name: buffer.name, weeks: fanOf(levels) });
+    } catch (error) {
+      if (own.signal.aborted) return setState({ status: "idle" });
+      setState({ status: "failed", message: error instanceof Error ? error.message : String(error) });
+    }
+  }
+
+  return (
+    <figure>
+      <div className="flex flex-wrap items-center gap-x-3 gap-y-1">
+        <h2 className="figure-title">Lowest stock in the week</h2>
+        <Pick
+          label="of"
+          value={buffer.id}
+          options={buffers.map(({ id, name }) => ({ value: id, label: name }))}
+          onChange={(id) => {
+            setWanted(id);
+            setState({ status: "idle" });
+          }}
+        />
+        <span className="ml-auto text-s text-ink-3">units, from the start</span>
+      </div>
+      {state.status === "done" && (
+        <FanChart weeks={state.weeks} nWarmup={warmupWeeks} label={describeFan(state.name, state.weeks)} />
+      )}
+      {state.status === "running" && (
+        <p role="status" className="py-4 text-ink-2">
+          Running {formatCount(Math.round(state.share * options.replications))} of {formatCount(options.replications)}{" "}
+          replications{" "}
+          <Button size="small" kind="stop" onClick={() => abort.current?.abort()}>
+            Cancel
+          </Button>
+        </p>
+      )}
+      {state.status === "failed" && (
+        <ErrorLine className="py-2">The stock could not be worked out: {state.message}</ErrorLine>
+      )}
+      {(state.status === "idle" || state.status === "failed" || isOther) && (
+        <div className="py-3">
+          <p className="text-s text-ink-3">
+            {isOther
+              ? "The line has changed since this was drawn."
+              : "Worked out when asked for, from the seed phrase: nothing of it is stored."}
+          </p>
+          <Button size="small" className="mt-2" onClick={() => void run()}>
+            {isOther ? "Draw again" : `Draw ${buffer.name}`}
+          </Button>
+        </div>
+      )}
+      {state.status === "done" && (
+        <figcaption className="text-s text-ink-3">
+          Ruled P5 to P95, washed P10 to P90, solid P25 to P75, line: median, over {formatCount(options.replications)}{" "}
+          replications.
+        </figcaption>
+      )}
+    </figure>
+  );
+}
+
+function describeFan(name: string, weeks: ReturnType<typeof fanOf>): string {
+  const last = weeks[weeks.length - 1];
+  if (!last) return `${name}: no weeks`;
+  return `Lowest weekly stock of ${name}: in the last week median ${formatCount(last.p50)}, P10 ${formatCount(last.p10)}, P90 ${formatCount(last.p90)}`;
+}
