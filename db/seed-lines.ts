@@ -6,13 +6,15 @@ import type { Content } from "./queries/content";
 
 type Sheet = Omit<Content, "options">;
 
-/** The drive unit line of Larkfield Drives with a remark beside the controller boards. */
+/** The drive unit line of Larkfield Drives with a remark on the controller boards. */
 export function driveUnitSheet(author: string, at: string): Sheet {
   const document: DraftLine = DraftLineInput.parse(exampleLine);
   const layout = autoLayout(document);
-  const { x, y } = layout.positions["sup-pcb"] ?? { x: 0, y: 0 };
+  // Below the end-of-line test the sheet is free.
+  const { x } = layout.positions.eol;
+  const y = layout.positions.stator.y;
   const text = "Boards are the longest wait after magnets. Purchasing expects the quoted 25 days to hold until spring.";
-  return { document, layout, notes: [{ id: "note-boards", x, y: y - 72, text, author, at }] };
+  return { document, layout, notes: [{ id: "note-boards", x, y, text, author, at }] };
 }
 
 const larger: Record<string, number> = { pcb: 6_000, gear: 4_500 };

@@ -7,7 +7,7 @@ export type CauseRow = { key: string; label: string; hours: Figure; isGrave: boo
 /** Hours a week by cause, longest first, with their intervals. */
 export function CauseBars({ rows }: { rows: readonly CauseRow[] }) {
   const most = Math.max(0.1, ...rows.map(({ hours }) => hours.value + (hours.halfWidth ?? 0)));
-  const width = 150;
+  const width = 116;
   const x = (value: number) => (Math.max(0, value) / most) * (width - 8);
   return (
     <table className="sheet-table">
@@ -18,7 +18,7 @@ export function CauseBars({ rows }: { rows: readonly CauseRow[] }) {
             <th scope="row" className="text-left font-text!">
               {label}
             </th>
-            <td className="w-[150px] max-sm:hidden">
+            <td className="w-[116px] max-sm:hidden">
               <svg width={width} height="18" aria-hidden>
                 <rect
                   x=".5"

@@ -8,7 +8,7 @@ import { hatch } from "./hatch-defs";
 
 type Props = { histogram: RateHistogram; atRisk: Figure; acceptedRisk: number; width?: number };
 
-const height = 250;
+const height = 300;
 const foot = 30;
 const head = 40;
 
@@ -83,7 +83,7 @@ export function DistributionChart({ histogram, atRisk, acceptedRisk, width = 640
         </g>
       ))}
       {nLeft > 0 && (
-        <text x={x(first)} y={height - foot - 8} className="axis-text">
+        <text x={x(first)} y={head + 8} className="axis-text">
           ← {formatCount(nLeft)} {nLeft === 1 ? "week" : "weeks"} below {first}
         </text>
       )}

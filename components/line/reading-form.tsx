@@ -5,7 +5,7 @@ import { useLine } from "@/lib/client/line-state";
 import { autoLayout } from "@/lib/line/auto-layout";
 import { useShownResult } from "./canvas/use-shown-result";
 import { NodeDrawing } from "./drawing/node-drawing";
-import { sizeOf } from "./drawing/sizes";
+import { sizeOf } from "@/lib/line/sheet-sizes";
 import { useDrawings } from "./drawing/use-sheet";
 
 /** The line for narrow screens: its nodes in the order of flow, to be read. */

@@ -3,7 +3,7 @@ import type { RunResult } from "@/lib/simulation/types";
 import { ChannelLayer } from "./drawing/channel-layer";
 import { channelsOf } from "./drawing/channels";
 import { NodeDrawing } from "./drawing/node-drawing";
-import { sizeOf } from "./drawing/sizes";
+import { sizeOf } from "@/lib/line/sheet-sizes";
 import { drawingsOf, placesOf } from "./drawing/use-sheet";
 
 type Props = { document: DraftLine; layout: Layout; notes?: readonly Note[]; result?: RunResult | null; label: string };

@@ -5,7 +5,7 @@ import { decimalsFor, formatMoney, formatNumber, formatPercent, thinSpace } from
 export type FigureText = { value: string; spread: string | null };
 
 /**
- * A share as percent with its half-width in points. A share that came out 0 or 1 reads "at most" or "at least" its
+ * A share as percent, to a tenth of a point unless its half-width reaches ten, with that half-width in points. A share that came out 0 or 1 reads "at most" or "at least" its
  * bound and has no spread.
  */
 export function formatShare(figure: Figure, most = 1): FigureText {
@@ -13,7 +13,7 @@ export function formatShare(figure: Figure, most = 1): FigureText {
   if (bound !== undefined)
     return { value: `at ${value === 0 ? "most" : "least"} ${formatPercent(bound, most)}`, spread: null };
   const points = halfWidth === null ? null : halfWidth * 100;
-  const decimals = decimalsFor(points, most);
+  const decimals = decimalsFor(points === null ? null : points / 10, most);
   return {
     value: formatPercent(value, decimals),
     spread: points === null ? null : spreadText(formatNumber(points, Math.max(1, decimals))),

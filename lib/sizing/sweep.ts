@@ -37,17 +37,19 @@ export function readSizes(text: string): { sizes: number[] } | { refusal: string
 const isSize = (value: number) => Number.isInteger(value) && value >= 1 && value < limits.count;
 const sizeRule = `Sizes are whole numbers, 1 or more and below ${sayCount(limits.count)}.`;
 
-/** A range around a size: from 60 % to 140 % of it in eight round steps. */
+/** A range around a size: four round steps of about a tenth of it to either side. */
 export function suggestRange(size: number): { from: number; to: number; step: number } {
-  const step = Math.max(1, roundStep((size * 0.8) / 8));
+  const step = nearestRound(size / 10);
   const from = Math.max(1, size - Math.min(4, Math.floor((size - 1) / step)) * step);
   return { from, to: size + 4 * step, step };
 }
 
-function roundStep(value: number): number {
-  if (value < 1) return 1;
-  const power = 10 ** (String(Math.floor(value)).length - 1);
-  return [1, 2, 2.5, 5, 10].map((m) => m * power).find((step) => step >= value && Number.isInteger(step)) ?? 10 * power;
+/** The round whole number closest to a value in ratio. */
+function nearestRound(value: number): number {
+  const power = 10 ** (String(Math.max(1, Math.floor(value))).length - 1);
+  const round = [1, 2, 2.5, 5, 10].map((m) => m * power).filter(Number.isInteger);
+  const distance = (step: number) => Math.max(step / value, value / step);
+  return round.reduce((best, step) => (distance(step) < distance(best) ? step : best));
 }
 
 export type SizeFigures = { size: number; atRisk: Figure; moneyTiedUp: Figure };

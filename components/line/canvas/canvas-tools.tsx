@@ -9,7 +9,6 @@ import { useLine } from "@/lib/client/line-state";
 import { autoLayout } from "@/lib/line/auto-layout";
 import { setLayout } from "@/lib/line/edits";
 import { BarTools } from "../bar-slot";
-import { sizesOf } from "../drawing/sizes";
 import { ConnectDialog } from "./connect-dialog";
 import { useAdd } from "./use-add";
 import { addKeys } from "./use-canvas-keys";
@@ -32,7 +31,7 @@ export function CanvasTools() {
   if (!mayEdit) return null;
 
   function arrange() {
-    apply(setLayout(autoLayout(document, sizesOf(document))));
+    apply(setLayout(autoLayout(document)));
     requestAnimationFrame(() => void fitView({ padding: 0.04, maxZoom: 1.1, duration: 160 }));
   }
 

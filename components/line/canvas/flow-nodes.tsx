@@ -7,7 +7,7 @@ import { useLine } from "@/lib/client/line-state";
 import type { Note } from "@/lib/line/types";
 import { LocalTime } from "../local-time";
 import { NodeDrawing } from "../drawing/node-drawing";
-import type { Point } from "../drawing/sizes";
+import type { Point } from "@/lib/line/sheet-sizes";
 import type { Drawing } from "../drawing/use-sheet";
 
 export type PlateData = { drawing: Drawing; inlet: Point; outlet: Point; size: { width: number; height: number } };

@@ -6,7 +6,7 @@ import { useLine } from "@/lib/client/line-state";
 import { addNode, addNote } from "@/lib/line/edits";
 import { createNode } from "@/lib/line/edits/nodes";
 import type { NodeKind } from "@/lib/line/types";
-import { sizeOf } from "../drawing/sizes";
+import { sizeOf } from "@/lib/line/sheet-sizes";
 
 /** Adds a node or a note at a free place in the middle of what is on screen, and selects it. */
 export function useAdd() {

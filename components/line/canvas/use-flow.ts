@@ -6,7 +6,7 @@ import { useLine } from "@/lib/client/line-state";
 import { linkKey, moveNodes } from "@/lib/line/edits";
 import { channelsOf } from "../drawing/channels";
 import { describeNode } from "../drawing/node-reading";
-import { inletOf, outletOf, type Point, sizeOf } from "../drawing/sizes";
+import { inletOf, outletOf, type Point, sizeOf } from "@/lib/line/sheet-sizes";
 import { placesOf, useDrawings } from "../drawing/use-sheet";
 import type { ChannelEdge } from "./flow-edge";
 import type { PlateData, SheetNode } from "./flow-nodes";

@@ -1,5 +1,5 @@
 import type { DraftLine, DraftNode } from "@/lib/line/types";
-import { inletOf, outletOf, type Point } from "./sizes";
+import { inletOf, outletOf, type Point } from "@/lib/line/sheet-sizes";
 
 export type Channel = { key: string; from: string; to: string; path: string; middle: Point };
 

@@ -6,7 +6,7 @@ import { WarnIcon } from "@/components/ui/icons";
 import { formatCount, formatNumber, formatPercent } from "@/lib/format";
 import type { DraftNode, DraftOf } from "@/lib/line/types";
 import { factsOf, type NodeReading } from "./node-reading";
-import { gauge, station } from "./sizes";
+import { gauge, station } from "@/lib/line/sheet-sizes";
 
 export type Inlet = { id: string; name: string };
 

@@ -4,12 +4,12 @@ import type { DraftLine, Fault, Layout } from "@/lib/line/types";
 import type { RunResult } from "@/lib/simulation/types";
 import type { NodeDrawingProps } from "./node-drawing";
 import { readingOf } from "./node-reading";
-import { type Point, sizesOf } from "./sizes";
+import type { Point } from "@/lib/line/sheet-sizes";
 
 /** Places of all nodes; those that nobody has placed yet are placed in flow order. */
 export function placesOf(document: DraftLine, layout: Layout): Record<string, Point> {
   if (document.nodes.every(({ id }) => layout.positions[id])) return layout.positions;
-  return { ...autoLayout(document, sizesOf(document)).positions, ...layout.positions };
+  return { ...autoLayout(document).positions, ...layout.positions };
 }
 
 export type Drawing = Omit<NodeDrawingProps, "onSizeChange">;

@@ -17,7 +17,7 @@ import { SupplierForm } from "./supplier-form";
 /** The form of what is selected: a node, a link, several things, or the line itself. */
 export function InspectorPanel() {
   const { selection } = useLine();
-  const [isOpen, setOpen] = useState(true);
+  const [isOpen, setOpen] = useState(false);
   if (!isOpen && selection.length === 0)
     return (
       <Button size="small" className="absolute top-2 right-20 z-[6]" onClick={() => setOpen(true)}>

@@ -142,7 +142,7 @@ function BufferTable({ caption, nodes, result, isLast, onRefusals }: BufferTable
     ? [`On hand, to ${formatCount(top)}`, "P10", "P50", "P90", "Dry, hours", `Capital, ${document.money.currency}`]
     : [];
   const isPurchased = caption === "Purchased stock";
-  const columns = columnsOf.buffer.filter(({ has }) => isPurchased || !has);
+  const columns = columnsOf.buffer;
   return (
     <NodeTable
       caption={caption}

@@ -1,6 +1,6 @@
-import type { Size } from "@/lib/line/auto-layout";
-import type { DraftLine, DraftNode } from "@/lib/line/types";
+import type { DraftLine, DraftNode } from "./types";
 
+export type Size = { width: number; height: number };
 export type Point = { x: number; y: number };
 
 /** Drawn sizes in px at 100 %. They are fixed, so that channels are known without measuring. */
@@ -19,10 +19,6 @@ export function sizeOf(document: DraftLine, node: DraftNode): Size {
   const nInlets = inletsOf(document, node.id).length;
   const inlets = nInlets > 1 ? nInlets * station.inlet : 8;
   return { width: station.width, height: station.head + inlets + station.foot };
-}
-
-export function sizesOf(document: DraftLine): Record<string, Size> {
-  return Object.fromEntries(document.nodes.map((node) => [node.id, sizeOf(document, node)]));
 }
 
 /** Where a channel leaves a node, from its top left corner: a gauge at its bed, plates at the middle of the right side. */
