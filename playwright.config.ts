@@ -10,7 +10,7 @@ export default defineConfig({
   // The machine may be busy: these are limits, not expectations.
   timeout: 180_000,
   expect: { timeout: 20_000 },
-  reporter: [["list"], ["json"]],
+  reporter: process.env.PLAYWRIGHT_JSON_OUTPUT_NAME ? [["list"], ["json"]] : [["list"]],
   use: {
     baseURL: address,
     trace: "retain-on-failure",
