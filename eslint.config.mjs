@@ -83,7 +83,10 @@ export default defineConfig([
       "no-restricted-syntax": [
         "error",
         envReader,
-        { selector: "BinaryExpression[operator='**']", message: "Powers may differ between browsers." },
+        {
+          selector: "BinaryExpression[operator='**']:not([left.value=2][right.type='Literal'])",
+          message: "Powers may differ between browsers; of 2 only, with a written exponent, are they exact.",
+        },
         { selector: "NewExpression[callee.name='Date']", message: "Time is an argument." },
         { selector: "ImportDeclaration[source.value='jstat']", message: "jstat is for lib/statistics only." },
       ],

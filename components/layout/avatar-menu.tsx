@@ -3,6 +3,7 @@
 import { useState, useSyncExternalStore } from "react";
 import { Menu, MenuHeading, MenuItem, MenuRule } from "@/components/ui/menu";
 import { signOut } from "@/lib/client/auth-client";
+import { loadPage } from "@/lib/client/load-page";
 import { chooseTheme, readTheme, type Theme, themes } from "./theme";
 
 const themeWords: Record<Theme, string> = { system: "As the system", light: "Light", dark: "Dark" };
@@ -29,7 +30,7 @@ export function AvatarMenu({ userName }: { userName: string }) {
   async function leave() {
     const problem = await signOut();
     if (problem) setError(problem);
-    else window.location.assign("/sign-in");
+    else loadPage("/sign-in");
   }
 
   return (

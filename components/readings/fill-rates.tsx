@@ -2,6 +2,7 @@
 
 import { useMemo } from "react";
 import { DistributionChart } from "@/components/charts/distribution-chart";
+import { useMediaQuery } from "@/lib/client/use-media-query";
 import { formatCount, formatNumber, formatPercent, weeksOf } from "@/lib/format";
 import { percentile } from "@/lib/simulation";
 import type { RunResult } from "@/lib/simulation/types";
@@ -22,12 +23,18 @@ export function sayFinding(atRisk: number, acceptedRisk: number, inFull: number)
 }
 
 export function FillRates({ result, acceptedRisk }: { result: RunResult; acceptedRisk: number }) {
+  const isNarrow = useMediaQuery("(max-width: 639px)");
   const histogram = useMemo(() => countRates(result.fillRates), [result]);
   const atRisk = useMemo(() => percentile(result, acceptedRisk), [result, acceptedRisk]);
   return (
     <figure>
       <h2 className="figure-title">{sayFinding(atRisk.value, acceptedRisk, result.summary.weeksInFull.value)}</h2>
-      <DistributionChart histogram={histogram} atRisk={atRisk} acceptedRisk={acceptedRisk} />
+      <DistributionChart
+        histogram={histogram}
+        atRisk={atRisk}
+        acceptedRisk={acceptedRisk}
+        width={isNarrow ? 400 : 640}
+      />
       <figcaption className="text-s text-ink-3">
         Share of what was due that shipped in the week, %, one bar a point; {formatCount(histogram.nWeeks)} weeks
         {histogram.nNoDemand > 0 && `, ${formatCount(histogram.nNoDemand)} more had nothing due`}.

@@ -6,6 +6,7 @@ import { Button } from "@/components/ui/button";
 import { ErrorLine } from "@/components/ui/error-line";
 import { Pick } from "@/components/ui/pick";
 import { type Reading, useLine } from "@/lib/client/line-state";
+import { useMediaQuery } from "@/lib/client/use-media-query";
 import { useSimulation } from "@/lib/client/use-simulation";
 import { formatCount } from "@/lib/format";
 import { fanOf } from "./fan";
@@ -20,6 +21,7 @@ type State =
 export function LowestStock({ reading }: { reading: Reading }) {
   const { parsed, digest } = useLine();
   const client = useSimulation();
+  const isNarrow = useMediaQuery("(max-width: 639px)");
   const buffers = useMemo(() => parsed?.nodes.filter((node) => node.kind === "buffer") ?? [], [parsed]);
   const [wanted, setWanted] = useState<string | null>(null);
   const [state, setState] = useState<State>({ status: "idle" });
@@ -65,7 +67,12 @@ export function LowestStock({ reading }: { reading: Reading }) {
         <span className="ml-auto text-s text-ink-3">units, from the start</span>
       </div>
       {state.status === "done" && (
-        <FanChart weeks={state.weeks} nWarmup={warmupWeeks} label={describeFan(state.name, state.weeks)} />
+        <FanChart
+          width={isNarrow ? 400 : 520}
+          weeks={state.weeks}
+          nWarmup={warmupWeeks}
+          label={describeFan(state.name, state.weeks)}
+        />
       )}
       {state.status === "running" && (
         <p role="status" className="py-4 text-ink-2">

@@ -9,7 +9,7 @@ import type { DraftLine, Layout } from "./types";
  */
 export function autoLayout(document: DraftLine): Layout {
   const graph = new graphlib.Graph();
-  graph.setGraph({ rankdir: "LR", nodesep: 22, ranksep: 44, marginx: 0, marginy: 0 });
+  graph.setGraph({ rankdir: "LR", nodesep: 6, ranksep: 40, marginx: 0, marginy: 0 });
   graph.setDefaultEdgeLabel(() => ({}));
   for (const node of document.nodes) graph.setNode(node.id, { ...sizeOf(document, node) });
   for (const { from, to } of document.links) if (graph.hasNode(from) && graph.hasNode(to)) graph.setEdge(from, to);

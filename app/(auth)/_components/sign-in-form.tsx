@@ -5,6 +5,7 @@ import { Button } from "@/components/ui/button";
 import { ErrorLine } from "@/components/ui/error-line";
 import { PasswordField, TextField } from "@/components/ui/text-field";
 import { signIn } from "@/lib/client/auth-client";
+import { loadPage } from "@/lib/client/load-page";
 
 export type DemoEntry = { name: string; email: string; role: string; password: string };
 
@@ -24,7 +25,7 @@ export function SignInForm({ next, demo }: { next: string; demo: readonly DemoEn
     setBusy(true);
     const problem = await signIn(email.trim(), password);
     setError(problem);
-    if (problem === null) window.location.assign(next);
+    if (problem === null) loadPage(next);
     else setBusy(false);
   }
 

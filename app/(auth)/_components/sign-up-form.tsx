@@ -5,6 +5,7 @@ import { Button } from "@/components/ui/button";
 import { ErrorLine } from "@/components/ui/error-line";
 import { PasswordField, TextField } from "@/components/ui/text-field";
 import { signUp } from "@/lib/client/auth-client";
+import { loadPage } from "@/lib/client/load-page";
 
 const shortest = 10;
 
@@ -29,7 +30,7 @@ export function SignUpForm() {
     setBusy(true);
     const problem = await signUp(name.trim(), email.trim(), password);
     setError(problem);
-    if (problem === null) window.location.assign("/lines");
+    if (problem === null) loadPage("/lines");
     else setBusy(false);
   }
 
