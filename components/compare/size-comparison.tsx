@@ -79,7 +79,7 @@ export function SizeComparison() {
               To share the comparison, keep the scenario with a full run first: a link shows kept figures only.
             </p>
           )}
-          <div className="mt-3 grid gap-6 xl:grid-cols-[minmax(0,1.1fr)_minmax(0,1fr)]">
+          <div className="mt-3 grid gap-6 min-[1700px]:grid-cols-[minmax(0,1fr)_minmax(0,1.2fr)]">
             <SweepChart
               rows={sweep.rows}
               acceptedRisk={options.acceptedRisk}
@@ -107,8 +107,9 @@ export function SizeComparison() {
             />
           </div>
           <p className="mt-3 text-s text-ink-3">
-            A step counts as help where it lifts the percentile by half a point and by more than its half-width. Large
-            stocks: check floor and rack loads, fire load and rules for hazardous goods with qualified people first.
+            Gains are paired: both sizes face the same weeks. A step counts as help where it lifts the percentile by
+            half a point and by more than its half-width. Large stocks: check floor and rack loads, fire load and rules
+            for hazardous goods with qualified people first.
           </p>
         </>
       )}
@@ -127,9 +128,9 @@ export function SizeComparison() {
 }
 
 function sweepRows(rows: readonly SweepRow[]) {
-  const keys = ["p05", "p10", "p50", "atRisk", "risk", "moneyTiedUp", "costPerYear"] as const;
+  const keys = ["gain", "p05", "p10", "p50", "atRisk", "risk", "moneyTiedUp", "costPerYear"] as const;
   return [
     ["size", ...keys.flatMap((key) => [key, `${key} half-width`])],
-    ...rows.map((row) => [row.size, ...keys.flatMap((key) => [row[key].value, row[key].halfWidth])]),
+    ...rows.map((row) => [row.size, ...keys.flatMap((key) => [row[key]?.value ?? null, row[key]?.halfWidth ?? null])]),
   ];
 }

@@ -2,6 +2,7 @@
 
 import { createContext, type ReactNode, use, useEffect, useMemo, useRef, useState } from "react";
 import { type Reading, useLine } from "@/lib/client/line-state";
+import { pairedDifference } from "@/lib/client/paired";
 import { useSimulation } from "@/lib/client/use-simulation";
 import { digestLine } from "@/lib/line";
 import type { Line } from "@/lib/line/types";
@@ -119,10 +120,11 @@ export function useSweep(): SweepState {
 }
 
 /** The figures of one size that tables, charts and links show. */
-export function toRow(size: number, result: RunResult, acceptedRisk: number): SweepRow {
+export function toRow(size: number, result: RunResult, before: RunResult | null, acceptedRisk: number): SweepRow {
   const { p05, p10, p50, risk, moneyTiedUp, costPerYear } = result.summary;
   return {
     size,
+    gain: before && pairedDifference(result, before, acceptedRisk),
     p05,
     p10,
     p50,
@@ -140,6 +142,8 @@ export function toSweep({ bufferId, bufferName, currentSize, readings }: SweepRu
     bufferName,
     unit: "units",
     currentSize,
-    rows: readings.map(({ size, reading }) => toRow(size, reading.result, acceptedRisk)),
+    rows: readings.map(({ size, reading }, i) =>
+      toRow(size, reading.result, readings[i - 1]?.reading.result ?? null, acceptedRisk),
+    ),
   };
 }

@@ -1,7 +1,15 @@
 import type { ReactNode } from "react";
-import { formatCount, formatMoney, formatNumber, formatPoints, formatShare, percentileName } from "@/lib/format";
+import {
+  formatCount,
+  formatMoney,
+  formatNumber,
+  formatPoints,
+  formatShare,
+  percentileName,
+  spreadText,
+} from "@/lib/format";
 import type { SweepRow } from "@/lib/schema/lines";
-import { findRest, stepsOf } from "@/lib/sizing/sweep";
+import { findRest, pricesOf } from "@/lib/sizing/sweep";
 
 type Props = {
   rows: readonly SweepRow[];
@@ -14,7 +22,7 @@ type Props = {
 
 /** Sizes with their percentiles, what each step gains and what it costs. */
 export function SweepTable({ rows, acceptedRisk, currentSize, currency, action }: Props) {
-  const steps = stepsOf(rows);
+  const prices = pricesOf(rows);
   const rest = findRest(rows);
   const name = percentileName(acceptedRisk);
   const names = ["P5", name, "P50"].filter((one, i, all) => all.indexOf(one) === i);
@@ -46,7 +54,7 @@ export function SweepTable({ rows, acceptedRisk, currentSize, currency, action }
         </thead>
         <tbody>
           {rows.map((row, i) => {
-            const { gain, pricePerPoint } = steps[i];
+            const pricePerPoint = prices[i];
             const figures = { P5: row.p05, [name]: row.atRisk, P50: row.p50 };
             return (
               <tr key={row.size} data-selected={row.size === rest}>
@@ -63,7 +71,18 @@ export function SweepTable({ rows, acceptedRisk, currentSize, currency, action }
                     </td>
                   );
                 })}
-                <td className="text-right">{gain === null ? "–" : formatPoints(gain)}</td>
+                <td className="text-right whitespace-nowrap">
+                  {row.gain === null ? (
+                    "–"
+                  ) : (
+                    <>
+                      {formatPoints(row.gain.value)}{" "}
+                      <span className="text-s text-ink-3">
+                        {row.gain.halfWidth !== null && spreadText(formatNumber(row.gain.halfWidth * 100, 1))}
+                      </span>
+                    </>
+                  )}
+                </td>
                 <td className="text-right">{formatMoney(row.moneyTiedUp.value)}</td>
                 <td className="text-right">{pricePerPoint === null ? "–" : formatMoney(pricePerPoint)}</td>
                 <td className="text-right whitespace-nowrap">

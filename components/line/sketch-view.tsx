@@ -93,7 +93,7 @@ function Loads() {
   const tightest = parsed && loadsOf(parsed)[0];
   if (!due) return null;
   return (
-    <span className="truncate text-s text-ink-3 max-xl:hidden">
+    <span className="truncate text-s text-ink-3 max-[1679px]:hidden">
       {formatCount(Math.round(due))} due a week
       {tightest && `, ${tightest.station.name} can make ${formatCount(Math.round(tightest.capacity))}`}
     </span>

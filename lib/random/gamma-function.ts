@@ -5,9 +5,7 @@ const halfLnTwoPi = 0.9189385332046727;
 /** Stirling's remainder: ln Gamma(x) - ((x - 1/2) ln x - x + ln(2 pi)/2), for x >= 10. */
 function stirlingRemainder(x: number): number {
   const s = 1 / (x * x);
-  return (
-    (1 / 12 - s * (1 / 360 - s * (1 / 1260 - s * (1 / 1680 - s * (1 / 1188 - s * (691 / 360360 - s / 156)))))) / x
-  );
+  return (1 / 12 - s * (1 / 360 - s * (1 / 1260 - s * (1 / 1680 - s * (1 / 1188 - s * (691 / 360360 - s / 156)))))) / x;
 }
 
 /**

@@ -69,6 +69,7 @@ export const SweepInput = z.object({
     .array(
       z.object({
         size,
+        gain: figure.nullable(),
         p05: figure,
         p10: figure,
         p50: figure,

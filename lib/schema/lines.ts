@@ -128,6 +128,8 @@ export type ScenarioDetail = {
 /** One row of a size comparison: figures of one size of one buffer. */
 export type SweepRow = {
   size: number;
+  /** What the accepted risk's percentile gains over the row before, a paired difference in share; null for the first. */
+  gain: Figure | null;
   p05: Figure;
   p10: Figure;
   p50: Figure;

@@ -61,7 +61,6 @@ function describeStoppages(stoppages: Stoppages, tickMinutes: number): StationMo
   return {
     startsDown: 0,
     upEnds: 1 / Math.max(1, (stoppages.meanUpHours * 60) / tickMinutes),
-    down:
-      stoppages.downCv === null ? { ends: 1 / Math.max(1, meanDown) } : { mean: meanDown, cv: stoppages.downCv },
+    down: stoppages.downCv === null ? { ends: 1 / Math.max(1, meanDown) } : { mean: meanDown, cv: stoppages.downCv },
   };
 }

@@ -15,7 +15,8 @@ export function mergeRuns(parts: RunResult[]): RunResult {
   const [head] = parts;
   const key = describeRun(head);
   for (const part of parts) {
-    if (describeRun(part) !== key) throw new RangeError("parts of different lines, options or engines cannot be merged");
+    if (describeRun(part) !== key)
+      throw new RangeError("parts of different lines, options or engines cannot be merged");
   }
   const rows = parts
     .flatMap(({ tallies }) => Array.from(tallies.replications, (replication, row) => ({ tallies, replication, row })))

@@ -22,8 +22,7 @@ function reviewBuffer(s: State, i: number): void {
   const owed = buffer.group >= 0 ? s.groupOld[buffer.group] + s.groupNew[buffer.group] : 0;
   const position = s.buffers[i * bufStride + buf.level] + s.onOrder[i] - owed;
   const below = buffer.size - position;
-  const need =
-    buffer.lot === 0 ? below : below >= 0 ? (Math.floor(below / buffer.lot) + 1) * buffer.lot : 0;
+  const need = buffer.lot === 0 ? below : below >= 0 ? (Math.floor(below / buffer.lot) + 1) * buffer.lot : 0;
   let left = need;
   for (let k = 0; k < buffer.suppliers.length; k++) {
     const supplier = buffer.suppliers[k];

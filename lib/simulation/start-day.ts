@@ -110,8 +110,7 @@ function callOff(s: State, dayOfWeek: number): void {
   for (let i = 0; i < customers.length; i++) {
     const { isWeekly, group } = customers[i];
     const demand = s.demand[i];
-    const daily =
-      Math.floor((demand * (dayOfWeek + 1)) / daysPerWeek) - Math.floor((demand * dayOfWeek) / daysPerWeek);
+    const daily = Math.floor((demand * (dayOfWeek + 1)) / daysPerWeek) - Math.floor((demand * dayOfWeek) / daysPerWeek);
     const units = !isWeekly ? daily : dayOfWeek === 0 ? demand : 0;
     s.owedNew[i] += units;
     s.groupNew[group] += units;

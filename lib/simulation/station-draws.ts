@@ -11,8 +11,7 @@ export function drawFirstGaps(s: State): void {
     s.disruptionGaps[i] = disruption
       ? nextGap(s.streams, streams.disruption * wordsPerStream, disruption.begins)
       : Infinity;
-    s.rejectGaps[i] =
-      rejectRate > 0 ? nextGap(s.streams, streams.reject * wordsPerStream, rejectRate) : Infinity;
+    s.rejectGaps[i] = rejectRate > 0 ? nextGap(s.streams, streams.reject * wordsPerStream, rejectRate) : Infinity;
   });
   s.model.stations.forEach((station, i) => {
     const at = i * staStride;

@@ -21,14 +21,11 @@ export function summariseRun(
     add(columns.buffers, (at, i) => (row[at + bufferColumn.level] / row[columns.ticks]) * shape.buffers[i].unitValue);
   const carrying = (s: Sums): number => carryingRate * tiedUp(s);
   const fines = (s: Sums): number =>
-    (weeksPerYear *
-      add(columns.customers, (at, i) => s.row[at + customerColumn.owed] * shape.customers[i].lateFine)) /
+    (weeksPerYear * add(columns.customers, (at, i) => s.row[at + customerColumn.owed] * shape.customers[i].lateFine)) /
     nWeeks(s);
-  const overtime = (s: Sums): number =>
-    (weeksPerYear * s.row[columns.overtimeWeeks] * overtimeCostPerWeek) / nWeeks(s);
+  const overtime = (s: Sums): number => (weeksPerYear * s.row[columns.overtimeWeeks] * overtimeCostPerWeek) / nWeeks(s);
   const scrap = (s: Sums): number =>
-    (weeksPerYear *
-      add(columns.stations, (at, i) => s.row[at + stationColumn.scrap] * shape.stations[i].scrapValue)) /
+    (weeksPerYear * add(columns.stations, (at, i) => s.row[at + stationColumn.scrap] * shape.stations[i].scrapValue)) /
     nWeeks(s);
   const [p01, p05, p10, p25, p50] = rateQuantiles(weeks, [0.01, 0.05, 0.1, 0.25, 0.5]);
   return {

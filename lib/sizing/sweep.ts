@@ -52,36 +52,29 @@ function nearestRound(value: number): number {
   return round.reduce((best, step) => (distance(step) < distance(best) ? step : best));
 }
 
-export type SizeFigures = { size: number; atRisk: Figure; moneyTiedUp: Figure };
+export type SizeFigures = { size: number; gain: Figure | null; moneyTiedUp: Figure };
 
-/** What one step to a row brings against the row before. `gain` in share; `pricePerPoint` money for each point, null where nothing is gained. */
-export type Step = { gain: number | null; pricePerPoint: number | null };
-
-export function stepsOf(rows: readonly SizeFigures[]): Step[] {
+/** Money for each point of fill rate that the step to a row gains; null for the first row and where nothing is gained. */
+export function pricesOf(rows: readonly SizeFigures[]): (number | null)[] {
   return rows.map((row, i) => {
     const before = rows[i - 1];
-    if (!before) return { gain: null, pricePerPoint: null };
-    const gain = row.atRisk.value - before.atRisk.value;
-    const money = row.moneyTiedUp.value - before.moneyTiedUp.value;
-    return { gain, pricePerPoint: gain > 0.0005 ? money / (gain * 100) : null };
+    if (!before || !row.gain || row.gain.value <= 0.0005) return null;
+    return (row.moneyTiedUp.value - before.moneyTiedUp.value) / (row.gain.value * 100);
   });
 }
 
-/** A gain of less than half a point, or within the half-width of the reading, is no help that can be read. */
+/** A step that gains less than half a point, or no more than its half-width, is no help that can be read. */
 const leastGain = 0.005;
 
+const helps = (gain: Figure | null) => gain !== null && gain.value >= leastGain && gain.value > (gain.halfWidth ?? 0);
+
 /**
- * The size past which more stock stops helping: the smallest from which no later size is better by half a point and by
- * more than its half-width.
- * @returns Null where even the largest still helps, or with fewer than three sizes.
+ * The size past which more stock stops helping: the last one to which a step helped.
+ * @param rows - Ascending sizes with paired gains, so that common luck does not hide a step.
+ * @returns Null where even the last step still helps, or with fewer than three sizes.
  */
 export function findRest(rows: readonly SizeFigures[]): number | null {
-  if (rows.length < 3) return null;
-  const index = rows.findIndex((row, i) =>
-    rows.slice(i + 1).every((later) => {
-      const gain = later.atRisk.value - row.atRisk.value;
-      return gain < leastGain || gain <= (later.atRisk.halfWidth ?? 0);
-    }),
-  );
-  return index < 0 || index >= rows.length - 1 ? null : rows[index].size;
+  if (rows.length < 3 || helps(rows[rows.length - 1].gain)) return null;
+  const last = rows.findLastIndex(({ gain }) => helps(gain));
+  return rows[Math.max(0, last)].size;
 }

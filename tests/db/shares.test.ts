@@ -47,6 +47,7 @@ const sweep: Sweep = {
   currentSize: 8,
   rows: [4, 8, 16].map((size) => ({
     size,
+    gain: size === 4 ? null : figure,
     p05: figure,
     p10: figure,
     p50: figure,

@@ -32,7 +32,7 @@ export function CanvasTools() {
 
   function arrange() {
     apply(setLayout(autoLayout(document)));
-    requestAnimationFrame(() => void fitView({ padding: 0.04, maxZoom: 1.1, duration: 160 }));
+    requestAnimationFrame(() => void fitView({ padding: 0.03, maxZoom: 1.1, duration: 160 }));
   }
 
   return (

@@ -12,6 +12,7 @@ import { nodeTypes, type SheetNode } from "./flow-nodes";
 import { SheetKey } from "./sheet-key";
 import { useCanvasKeys } from "./use-canvas-keys";
 import { useCentre } from "./use-centre";
+import { fitOptions, useFit } from "./use-fit";
 import { useFlow } from "./use-flow";
 import { ZoomControls } from "./zoom-controls";
 
@@ -35,6 +36,7 @@ function Canvas() {
   const [refusal, setRefusal] = useState<string | null>(null);
   const onKeyDown = useCanvasKeys();
   useCentre();
+  const fit = useFit();
 
   const isValidConnection: IsValidConnection<ChannelEdge> = ({ source, target }) =>
     canConnect(document, source, target) === null;
@@ -63,6 +65,7 @@ function Canvas() {
           const [from, to] = fromHandle?.type === "target" ? [toNode, fromNode] : [fromNode, toNode];
           setRefusal(canConnect(document, from.id, to.id));
         }}
+        onMoveStart={fit.onMoveStart}
         onPaneClick={() => selection.length > 0 && select([])}
         nodesDraggable={mayEdit}
         nodesConnectable={mayEdit}
@@ -73,7 +76,7 @@ function Canvas() {
         minZoom={0.2}
         maxZoom={2}
         fitView
-        fitViewOptions={{ padding: 0.04, maxZoom: 1.1 }}
+        fitViewOptions={fitOptions}
         onlyRenderVisibleElements={document.nodes.length > 120}
         nodeDragThreshold={2}
         zIndexMode="manual"
@@ -92,7 +95,7 @@ function Canvas() {
             <ChannelLayer channels={channels} chosen={selection} />
           </svg>
         </ViewportPortal>
-        <ZoomControls />
+        <ZoomControls onFit={fit.fit} />
       </ReactFlow>
       <SheetKey />
       {refusal && (

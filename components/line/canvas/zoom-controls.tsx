@@ -4,9 +4,9 @@ import { Panel, useReactFlow, useViewport } from "@xyflow/react";
 import { useEffect } from "react";
 
 /** Zoom in, out and to the whole line; how far the sheet is zoomed also decides which details it shows. */
-export function ZoomControls() {
+export function ZoomControls({ onFit }: { onFit(): void }) {
   const { zoom } = useViewport();
-  const { zoomIn, zoomOut, zoomTo, fitView } = useReactFlow();
+  const { zoomIn, zoomOut, zoomTo } = useReactFlow();
   useEffect(() => {
     const sheet = document.querySelector(".sheet-canvas");
     sheet?.toggleAttribute("data-far", zoom < 0.6);
@@ -24,12 +24,7 @@ export function ZoomControls() {
       <button type="button" className={part} aria-label="Zoom in" onClick={() => void zoomIn()}>
         +
       </button>
-      <button
-        type="button"
-        className={part}
-        aria-label="Fit the whole line"
-        onClick={() => void fitView({ padding: 0.04, maxZoom: 1.1 })}
-      >
+      <button type="button" className={part} aria-label="Fit the whole line" onClick={onFit}>
         Fit
       </button>
     </Panel>
