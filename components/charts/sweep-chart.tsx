@@ -63,7 +63,7 @@ export function SweepChart({ rows, acceptedRisk, currentSize, restSize, width = 
   const ends = spread(series.map(({ of: read }) => y(read(rows[rows.length - 1]).value) + 4));
   const isInside = (size: number) => size >= first && size <= last;
   return (
-    <svg viewBox={`0 0 ${width} ${height}`} width="100%" role="img" aria-label={label}>
+    <svg viewBox={`0 0 ${width} ${height}`} width="100%" className="max-w-[860px]" role="img" aria-label={label}>
       {grid.map((share) => (
         <g key={share}>
           <path d={`M46 ${y(share)}H${width - 150}`} stroke="var(--rule)" />

@@ -105,7 +105,6 @@ export function saySweep(bufferName: string, rows: readonly SweepRow[], accepted
   if (rows.length < 3) return `${bufferName}: ${formatCount(rows.length)} sizes compared`;
   if (rest === null)
     return `${bufferName}: up to ${formatCount(rows[rows.length - 1].size)} every step still lifts ${name}`;
-  if (rest === rows[0].size)
-    return `${bufferName}: no size above ${formatCount(rest)} lifts ${name} by half a point that can be read`;
-  return `${bufferName}: past ${formatCount(rest)}, more stock lifts ${name} by less than half a point`;
+  if (rest === rows[0].size) return `${bufferName}: no step above ${formatCount(rest)} lifts ${name} clearly`;
+  return `${bufferName}: past ${formatCount(rest)}, a step of stock no longer lifts ${name} clearly`;
 }

@@ -1,3 +1,4 @@
+import { ScaleToFit } from "@/components/ui/scale-to-fit";
 import type { DraftLine, Layout, Note } from "@/lib/line/types";
 import type { RunResult } from "@/lib/simulation/types";
 import { ChannelLayer } from "./drawing/channel-layer";
@@ -10,7 +11,7 @@ type Props = { document: DraftLine; layout: Layout; notes?: readonly Note[]; res
 
 const margin = 12;
 
-/** A still picture of a line as it stands on the sheet, for pages that only show it. Scrolls sideways where it is too wide. */
+/** A still picture of a line as it stands on the sheet, for pages that only show it. It shrinks with the page, then scrolls sideways. */
 export function SheetPicture({ document, layout, notes = [], result = null, label }: Props) {
   const places = placesOf(document, layout);
   const drawings = drawingsOf(document, result);
@@ -23,43 +24,41 @@ export function SheetPicture({ document, layout, notes = [], result = null, labe
   const width = Math.max(...all.map((box) => box.x + box.width)) + margin - left;
   const height = Math.max(...all.map((box) => box.y + box.height)) + margin - top;
   return (
-    <div className="overflow-x-auto" role="region" tabIndex={0} aria-label={label}>
-      <div className="relative" style={{ width, height }}>
-        <svg
-          className="absolute inset-0"
-          width={width}
-          height={height}
-          viewBox={`${left} ${top} ${width} ${height}`}
-          aria-hidden
+    <ScaleToFit width={width} height={height} label={label}>
+      <svg
+        className="absolute inset-0"
+        width={width}
+        height={height}
+        viewBox={`${left} ${top} ${width} ${height}`}
+        aria-hidden
+      >
+        <ChannelLayer channels={channelsOf(document, places)} />
+      </svg>
+      {document.nodes.map((node) => {
+        const drawing = drawings.get(node.id);
+        const { width: w, height: h } = sizeOf(document, node);
+        return (
+          drawing && (
+            <div
+              key={node.id}
+              className="absolute"
+              style={{ left: places[node.id].x - left, top: places[node.id].y - top, width: w, height: h }}
+            >
+              <NodeDrawing {...drawing} />
+            </div>
+          )
+        );
+      })}
+      {notes.map((note) => (
+        <div
+          key={note.id}
+          className="absolute w-60 border-l-2 border-ink pl-3"
+          style={{ left: note.x - left, top: note.y - top }}
         >
-          <ChannelLayer channels={channelsOf(document, places)} />
-        </svg>
-        {document.nodes.map((node) => {
-          const drawing = drawings.get(node.id);
-          const { width: w, height: h } = sizeOf(document, node);
-          return (
-            drawing && (
-              <div
-                key={node.id}
-                className="absolute"
-                style={{ left: places[node.id].x - left, top: places[node.id].y - top, width: w, height: h }}
-              >
-                <NodeDrawing {...drawing} />
-              </div>
-            )
-          );
-        })}
-        {notes.map((note) => (
-          <div
-            key={note.id}
-            className="absolute w-60 border-l-2 border-ink pl-3"
-            style={{ left: note.x - left, top: note.y - top }}
-          >
-            <p className="text-s font-[620]">{note.author}</p>
-            <p className="text-s text-ink-2">{note.text}</p>
-          </div>
-        ))}
-      </div>
-    </div>
+          <p className="text-s font-[620]">{note.author}</p>
+          <p className="text-s text-ink-2">{note.text}</p>
+        </div>
+      ))}
+    </ScaleToFit>
   );
 }

@@ -6,7 +6,7 @@ export type Point = { x: number; y: number };
 /** Drawn sizes in px at 100 %. They are fixed, so that channels are known without measuring. */
 export const plate = { width: 148, height: 60 };
 export const gauge = { width: 148, height: 104, x: 4, y: 36, bay: 39, depth: 50 };
-export const station = { width: 156, head: 46, inlet: 34, foot: 26 };
+export const station = { width: 156, head: 60, inlet: 34, foot: 26 };
 
 /** Links into a station, in document order: its inlets from top to bottom. */
 export function inletsOf(document: DraftLine, stationId: string): DraftLine["links"] {

@@ -77,7 +77,7 @@ function StationDrawing({ node, reading, inlets }: NodeDrawingProps & { node: Dr
     <span className="absolute inset-0 border border-ink bg-sheet">
       <span aria-hidden className="absolute -inset-x-px -top-px h-1 border-b border-paper bg-ink" />
       <span className="absolute inset-x-2.5 top-[7px]">
-        <b className="block truncate text-[12.5px]/[17px] font-[620]" title={node.name}>
+        <b className="line-clamp-2 text-[12.5px]/[15px] font-[620] [overflow-wrap:anywhere]" title={node.name}>
           {node.name}
         </b>
         <span className="sheet-detail block truncate text-[12px]/[16px] text-ink-2">{factsOf(node)}</span>
