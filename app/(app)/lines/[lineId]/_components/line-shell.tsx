@@ -50,7 +50,11 @@ export function LineShell({ line, initial, userName, children }: Props) {
               <div className="flex h-dvh flex-col overflow-hidden print:block print:h-auto print:overflow-visible">
                 <LineMasthead userName={userName} />
                 <ScenarioBar />
-                <main id="main" className="relative flex min-h-0 flex-1 flex-col overflow-auto print:overflow-visible">
+                <main
+                  id="main"
+                  tabIndex={0}
+                  className="relative flex min-h-0 flex-1 flex-col overflow-auto focus-visible:shadow-[inset_0_0_0_2px_var(--water-600)] print:overflow-visible"
+                >
                   {children}
                 </main>
                 <ResultStrip />
