@@ -27,7 +27,7 @@ export function SweepTable({ rows, acceptedRisk, currentSize, currency, action }
   const name = percentileName(acceptedRisk);
   const names = ["P5", name, "P50"].filter((one, i, all) => all.indexOf(one) === i);
   return (
-    <div className="overflow-x-auto">
+    <div className="overflow-x-auto" tabIndex={0}>
       <table className="sheet-table">
         <thead>
           <tr>

@@ -15,7 +15,7 @@ export function CustomerTable({ result, document }: { result: RunResult; documen
     );
   };
   return (
-    <section className="overflow-x-auto">
+    <section className="overflow-x-auto" tabIndex={0}>
       <h2 className="figure-title">Customers</h2>
       <table className="sheet-table mt-1">
         <thead>

@@ -8,7 +8,7 @@ export function StationTable({ result, document }: { result: RunResult; document
   const hours = (document.calendar.hoursPerDay ?? 0) * (document.calendar.daysPerWeek ?? 0);
   const stations = document.nodes.filter((node) => node.kind === "station" && result.stations[node.id]);
   return (
-    <section className="overflow-x-auto">
+    <section className="overflow-x-auto" tabIndex={0}>
       <h2 className="figure-title flex items-baseline gap-3">
         Where the stations’ hours go
         <span className="ml-auto text-s font-text text-ink-3">of {formatNumber(hours)} h a week, overtime apart</span>

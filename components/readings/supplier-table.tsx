@@ -6,7 +6,7 @@ export function SupplierTable({ result, document }: { result: RunResult; documen
   const suppliers = document.nodes.filter((node) => node.kind === "supplier" && result.suppliers[node.id]);
   if (suppliers.length === 0) return null;
   return (
-    <section className="overflow-x-auto">
+    <section className="overflow-x-auto" tabIndex={0}>
       <h2 className="figure-title">Deliveries as simulated</h2>
       <table className="sheet-table mt-1">
         <thead>
