@@ -1,4 +1,4 @@
-import { meanUseAWeek } from "./mean-use";
+import { meanUsesAWeek } from "./mean-use";
 import type { DraftLine, Line, Station } from "./types";
 import { meanOf } from "./distribution-mean";
 
@@ -34,10 +34,11 @@ export type Load = { station: Station; due: number; capacity: number };
 
 /** Loads of all stations whose need is known, the most loaded first. */
 export function loadsOf(line: Line): Load[] {
+  const weeklyUse = meanUsesAWeek(line);
   const loads = line.nodes.flatMap((node): Load[] => {
     if (node.kind !== "station") return [];
     const output = line.links.find((link) => link.from === node.id);
-    const use = output ? meanUseAWeek(line, output.to) : null;
+    const use = output ? weeklyUse(output.to) : null;
     if (!output || use === null) return [];
     const nFeeders = line.links.filter((link) => link.to === output.to).length;
     return [{ station: node, due: use / nFeeders, capacity: capacityAWeek(line, node) }];

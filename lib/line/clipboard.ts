@@ -26,7 +26,7 @@ export function readCells(text: string): string[][] {
 /**
  * A number as people and spreadsheets write it: decimal point or comma, thousands parted by spaces, points, commas or
  * apostrophes, a percent sign (divides by 100), a leading or typographic minus.
- * @returns Null for an empty cell, NaN for what is no number. "1,234" reads as 1234 and "1,5" as 1.5: a single comma
+ * @returns Null for an empty cell, NaN for what is no finite number. "1,234" reads as 1234 and "1,5" as 1.5: a single comma
  * before exactly three digits parts thousands, like a single point does only where `isWhole` asks for a count.
  */
 export function readNumber(text: string, isWhole = false): number | null {
@@ -34,7 +34,9 @@ export function readNumber(text: string, isWhole = false): number | null {
   if (plain === "") return null;
   const isPercent = plain.endsWith("%");
   const digits = isPercent ? plain.slice(0, -1) : plain;
-  const value = Number(normalise(digits, isWhole) || "x");
+  const normal = normalise(digits, isWhole);
+  const value = /^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i.test(normal) ? Number(normal) : NaN;
+  if (!Number.isFinite(value)) return NaN;
   return isPercent ? value / 100 : value;
 }
 
@@ -43,12 +45,16 @@ function normalise(digits: string, isWhole: boolean): string {
   const lastComma = digits.lastIndexOf(",");
   if (lastPoint >= 0 && lastComma >= 0) {
     const [decimal, group] = lastPoint > lastComma ? [".", ","] : [",", "."];
+    // "1.2.3,4" and "1,23.5" part no thousands: such a cell is refused, not guessed at.
+    const pieces = digits.slice(0, Math.max(lastPoint, lastComma)).split(group);
+    if (!isGrouped(pieces)) return "";
     return digits.split(group).join("").replace(decimal, ".");
   }
   const mark = lastComma >= 0 ? "," : ".";
   const pieces = digits.split(mark);
-  const looksGrouped =
-    pieces.length > 1 && /^-?[1-9]\d{0,2}$/.test(pieces[0]) && pieces.slice(1).every((piece) => /^\d{3}$/.test(piece));
-  if (looksGrouped && (pieces.length > 2 || mark === "," || isWhole)) return pieces.join("");
+  if (isGrouped(pieces) && (pieces.length > 2 || mark === "," || isWhole)) return pieces.join("");
   return digits.replace(",", ".");
 }
+
+const isGrouped = ([first, ...rest]: readonly string[]) =>
+  rest.length > 0 && /^[+-]?[1-9]\d{0,2}$/.test(first) && rest.every((piece) => /^\d{3}$/.test(piece));

@@ -94,15 +94,17 @@ export function describeField(path: string, value: unknown): string {
   if (typeof value === "boolean") return value ? "yes" : "no";
   if (typeof value === "string") return words[value] ?? value;
   if (Array.isArray(value)) return `${value.length} values`;
-  return describeObject(value as Record<string, unknown>);
+  return describeObject(path, value as Record<string, unknown>);
 }
 
-function describeObject(value: Record<string, unknown>): string {
+function describeObject(path: string, value: Record<string, unknown>): string {
   const { type, pattern, rule, ...rest } = value;
   const head = [type, pattern, rule]
     .filter((part): part is string => typeof part === "string")
     .map((part) => words[part] ?? part);
-  const fields = Object.entries(rest).map(([key, field]) => `${parts[key] ?? key} ${describeField(key, field)}`);
+  const fields = Object.entries(rest).map(
+    ([key, field]) => `${parts[key] ?? names[`${path}.${key}`] ?? key} ${describeField(`${path}.${key}`, field)}`,
+  );
   return [...head, ...fields].join(", ");
 }
 

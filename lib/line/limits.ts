@@ -8,6 +8,9 @@ export const limits = {
   /** replications x (weeks + warm-up weeks). */
   replicationWeeks: 1_000_000,
   documentBytes: 2 * 1024 * 1024,
+  /** Shorter work than this on a unit would let a tick make units without end. */
+  cycleMinutes: 1e-9,
+  cycleCv: 1_000,
   textLength: 200,
   empiricalValues: 20_000,
 } as const;

@@ -1,5 +1,5 @@
 import { meanOf } from "./distribution-mean";
-import type { DraftLine } from "./types";
+import type { DraftLine, DraftNode } from "./types";
 
 /**
  * Mean units a working day that a buffer's takers draw in the long run: customers' mean demand, carried upstream
@@ -8,39 +8,57 @@ import type { DraftLine } from "./types";
  */
 export function meanUseADay(document: DraftLine, bufferId: string): number | null {
   const days = document.calendar.daysPerWeek;
-  const use = meanUseAWeek(document, bufferId, new Set());
+  const use = meanUsesAWeek(document)(bufferId);
   return use === null || !days ? null : use / days;
 }
 
-/** As `meanUseADay`, for a week. */
-export function meanUseAWeek(
-  document: DraftLine,
-  bufferId: string,
-  passed: ReadonlySet<string> = new Set(),
-): number | null {
-  if (passed.has(bufferId)) return null;
-  const inner = new Set(passed).add(bufferId);
-  const takers = document.links.filter((link) => link.from === bufferId);
-  if (takers.length === 0) return null;
-  let total = 0;
-  for (const link of takers) {
-    const node = document.nodes.find((other) => other.id === link.to);
+/**
+ * As `meanUseADay`, for a week and for any buffer: each is worked out once, so the effort grows with the links and
+ * not with the ways through the line. Null too where a circle of links lies downstream.
+ */
+export function meanUsesAWeek(document: DraftLine): (bufferId: string) => number | null {
+  const byId = new Map(document.nodes.map((node) => [node.id, node]));
+  const outgoing = new Map<string, DraftLine["links"]>();
+  const nFeeders = new Map<string, number>();
+  for (const link of document.links) {
+    outgoing.set(link.from, [...(outgoing.get(link.from) ?? []), link]);
+    nFeeders.set(link.to, (nFeeders.get(link.to) ?? 0) + 1);
+  }
+  const known = new Map<string, number | null>();
+
+  function weeklyUse(bufferId: string): number | null {
+    const found = known.get(bufferId);
+    if (found !== undefined) return found;
+    known.set(bufferId, null);
+    const use = sumOf(outgoing.get(bufferId) ?? []);
+    known.set(bufferId, use);
+    return use;
+  }
+
+  function sumOf(takers: DraftLine["links"]): number | null {
+    if (takers.length === 0) return null;
+    let total = 0;
+    for (const { to, quantity } of takers) {
+      const drawn = drawnBy(byId.get(to), quantity ?? 1);
+      if (drawn === null) return null;
+      total += drawn;
+    }
+    return total;
+  }
+
+  /** Several stations that fill one buffer are taken to share its use equally. */
+  function drawnBy(node: DraftNode | undefined, quantity: number): number | null {
     if (node?.kind === "customer") {
       const mean = meanOf(node.weeklyDemand);
-      if (mean === null) return null;
-      total += Math.max(0, mean);
-    } else if (node?.kind === "station") {
-      const output = document.links.find((other) => other.from === node.id);
-      const good = output ? meanUseAWeek(document, output.to, inner) : null;
-      const scrap = node.scrapRate ?? 0;
-      if (good === null || scrap >= 1) return null;
-      total += (shareOfFeeder(document, output!.to) * good * (link.quantity ?? 1)) / (1 - scrap);
+      return mean === null ? null : Math.max(0, mean);
     }
+    if (node?.kind !== "station") return 0;
+    const output = outgoing.get(node.id)?.[0];
+    const good = output ? weeklyUse(output.to) : null;
+    const scrap = node.scrapRate ?? 0;
+    if (!output || good === null || scrap >= 1) return null;
+    return (good * quantity) / Math.max(1, nFeeders.get(output.to) ?? 1) / (1 - scrap);
   }
-  return total;
-}
 
-/** Several stations that fill one buffer are taken to share its use equally. */
-function shareOfFeeder(document: DraftLine, bufferId: string): number {
-  return 1 / Math.max(1, document.links.filter((link) => link.to === bufferId).length);
+  return weeklyUse;
 }

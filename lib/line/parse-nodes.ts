@@ -1,5 +1,6 @@
 import { checkDistribution } from "./parse-distribution";
-import { type Checker, isRecord, type Place, rule } from "./parse-fields";
+import { limits, sayCount } from "./limits";
+import { type Checker, isRecord, type NumberRule, type Place, rule } from "./parse-fields";
 import type { NodeKind } from "./types";
 
 type Fields = Record<string, unknown>;
@@ -37,6 +38,15 @@ export function checkNode(check: Checker, node: Fields & { kind: NodeKind; id: s
   check.keys(node, place, "", kindWords[node.kind], ["kind", "id", "name", ...keysOf[node.kind]]);
   checkers[node.kind](check, node, place);
 }
+
+const cycleRule: NumberRule = {
+  allows: (v) => v >= limits.cycleMinutes,
+  sentence: `Cycle in minutes has to be more than 0: at least ${limits.cycleMinutes.toFixed(9)}.`,
+};
+const variationRule: NumberRule = {
+  allows: (v) => v >= 0 && v <= limits.cycleCv,
+  sentence: `Variation of the cycle has to be 0 or more, up to ${sayCount(limits.cycleCv)}.`,
+};
 
 const checkers: Record<NodeKind, (check: Checker, node: Fields, place: Place) => void> = {
   supplier(check, node, place) {
@@ -85,8 +95,8 @@ const checkers: Record<NodeKind, (check: Checker, node: Fields, place: Place) =>
   },
 
   station(check, node, place) {
-    check.number(node.cycleMinutes, place, "cycleMinutes", "The cycle", rule.aboveZero("Cycle in minutes"));
-    check.number(node.cycleCv, place, "cycleCv", "The cycle's variation", rule.atLeastZero("Variation of the cycle"));
+    check.number(node.cycleMinutes, place, "cycleMinutes", "The cycle", cycleRule);
+    check.number(node.cycleCv, place, "cycleCv", "The cycle's variation", variationRule);
     check.number(node.parallel, place, "parallel", "Workplaces", rule.wholeFromOne("Number of workplaces"));
     check.number(node.scrapRate, place, "scrapRate", "Scrap", rule.shareBelowOne("Scrap"));
     if (node.stoppages !== null) checkStoppages(check, node.stoppages, place);

@@ -24,7 +24,7 @@ export function parseLine(json: unknown): { line: Line } | { faults: Fault[] } {
   check.text(json.name, {}, "name", "The line's name");
   checkCalendar(check, json.calendar);
   checkMoney(check, json.money);
-  checkOvertime(check, json.overtime);
+  checkOvertime(check, json.overtime, json.calendar);
   checkNodesAndLinks(check, json.nodes, json.links);
   return check.faults.length > 0 ? { faults: check.faults } : { line: json as Line };
 }
@@ -105,7 +105,7 @@ function checkMoney(check: Checker, value: unknown) {
   );
 }
 
-function checkOvertime(check: Checker, value: unknown) {
+function checkOvertime(check: Checker, value: unknown, calendar: unknown) {
   if (value === null) return;
   if (!check.keys(value, {}, "overtime", "Overtime", ["backlogTrigger", "hoursPerWeek", "costPerHour"])) return;
   check.number(
@@ -115,7 +115,7 @@ function checkOvertime(check: Checker, value: unknown) {
     "The backlog that calls overtime",
     rule.atLeastZero("Backlog that calls overtime"),
   );
-  check.number(value.hoursPerWeek, {}, "overtime.hoursPerWeek", "Overtime hours a week", {
+  const isHours = check.number(value.hoursPerWeek, {}, "overtime.hoursPerWeek", "Overtime hours a week", {
     allows: (v) => v > 0 && v <= 168,
     sentence: "Overtime hours a week have to be more than 0, up to 168.",
   });
@@ -126,6 +126,15 @@ function checkOvertime(check: Checker, value: unknown) {
     "The cost of an overtime hour",
     rule.atLeastZero("Cost of an overtime hour"),
   );
+  const tick = isRecord(calendar) ? calendar.tickMinutes : null;
+  if (!isHours || typeof tick !== "number" || !(tick > 0)) return;
+  const ticks = ((value.hoursPerWeek as number) * 60) / tick;
+  if (ticks > limits.ticksPerWeek)
+    check.add(
+      {},
+      "overtime.hoursPerWeek",
+      `Overtime adds ${sayCount(Math.round(ticks))} ticks to a week; the limit is ${sayCount(limits.ticksPerWeek)}. Use longer ticks or fewer hours.`,
+    );
 }
 
 function checkNodesAndLinks(check: Checker, nodes: unknown, links: unknown) {
@@ -197,7 +206,7 @@ function checkFeeds(
         );
     }
     const shares = suppliers.map((node) => byId.get(node.id)!.share);
-    if (shares.length > 0 && shares.every((share) => typeof share === "number")) {
+    if (shares.length > 0 && shares.every(Number.isFinite)) {
       const sum = (shares as number[]).reduce((total, share) => total + share, 0);
       if (!(Math.abs(sum - 1) <= 1e-6))
         check.add(

@@ -1,5 +1,6 @@
 "use client";
 
+import { useState } from "react";
 import {
   BoundNumber,
   BoundPick,
@@ -10,6 +11,8 @@ import {
   readPath,
   useFieldScope,
 } from "@/components/forms/field-scope";
+import { faultOf } from "@/components/forms/fault-lookup";
+import { NumberField } from "@/components/ui/number-field";
 import { Pick } from "@/components/ui/pick";
 
 const upDown = { pattern: "upDown", meanUpHours: 40, meanDownHours: 1, downCv: 1, clock: "running" };
@@ -68,14 +71,7 @@ function StoppageFields() {
             ]}
             onChange={(next) => set("stoppages.downCv", next === "lognormal" ? 1 : null)}
           />
-          {isRandom && (
-            <BoundNumber
-              path="stoppages.downCv"
-              label="Variation of its length"
-              hint="sd over mean; 0 is always the same"
-              step={0.1}
-            />
-          )}
+          {isRandom && <LengthVariation />}
           <BoundPick
             path="stoppages.clock"
             label="Time between stoppages runs"
@@ -87,5 +83,25 @@ function StoppageFields() {
         </>
       )}
     </>
+  );
+}
+
+/** Null means geometric in the document, so an emptied field keeps the last number there and says what is missing. */
+function LengthVariation() {
+  const { value, faults, nodeId, readOnly, set } = useFieldScope();
+  const [isEmptied, setEmptied] = useState(false);
+  return (
+    <NumberField
+      label="Variation of its length"
+      hint="sd over mean; 0 is always the same"
+      step={0.1}
+      value={isEmptied ? null : Number(readPath(value, "stoppages.downCv"))}
+      error={isEmptied ? "Type a number, or choose geometric above." : faultOf(faults, nodeId, "stoppages.downCv")}
+      readOnly={readOnly}
+      onChange={(next) => {
+        setEmptied(next === null);
+        if (next !== null) set("stoppages.downCv", next);
+      }}
+    />
   );
 }
