@@ -6,7 +6,7 @@ const nFine = 256;
 /**
  * Quantiles of a gamma variate of mean 1 for drawing by interpolation. `cells`: at i / 2048; `low` and `high`: the
  * first and the last cell cut again into 256, whose outermost parts are inverted exactly at each draw.
- * Interpolation leaves the mean within 1e-6 and the sd within 1e-4 of the gamma's, relatively.
+ * Interpolation leaves mean and sd off by relatively 5e-6 and 1e-4 up to cv 0.35, 4e-5 and 3e-4 at 1, 1e-3 and 2e-3 at 5.
  */
 export type WorkTable = { shape: number; cells: Float32Array; low: Float32Array; high: Float32Array };
 

@@ -15,6 +15,7 @@ export function compileStations(
   const stations: StationModel[] = [];
   const inputs: number[] = [];
   const stationStart = new Int32Array(graph.stations.length * staStride);
+  const lastFeeder = new Map(graph.serviceOrder.map((index) => [graph.stationOutput[index], index]));
   const amountStart = new Float64Array(graph.stations.length * amtStride);
   graph.serviceOrder.forEach((index, position) => {
     const node = graph.stations[index];
@@ -32,15 +33,16 @@ export function compileStations(
     });
     const at = position * staStride;
     const output = graph.stationOutput[index];
-    stationStart[at + sta.next] = position * blockLength;
-    stationStart[at + sta.end] = (position + 1) * blockLength;
+    stationStart[at + sta.next] = amountStart.length + position * blockLength;
+    stationStart[at + sta.end] = stationStart[at + sta.next] + blockLength;
     stationStart[at + sta.out] = output * bufStride;
     stationStart[at + sta.inputs] = inputs.length;
     for (const { buffer, quantity } of graph.stationInputs[index]) inputs.push(buffer * bufStride, quantity);
     stationStart[at + sta.inputsEnd] = inputs.length;
     stationStart[at + sta.lostTick] = -2;
-    stationStart[at + sta.always] = node.stoppages && isAlways(node.stoppages) ? 1 : 0;
+    stationStart[at + sta.idleStep] = node.stoppages && isAlways(node.stoppages) ? 0 : 1;
     stationStart[at + sta.isCharged] = graph.customerBuffer.includes(output) ? 1 : 0;
+    stationStart[at + sta.closesOut] = lastFeeder.get(output) === index ? 1 : 0;
     stationStart[at + sta.cause] = causeAt(node.id);
     amountStart[position * amtStride + amt.speed] = node.parallel;
   });

@@ -7,31 +7,30 @@ import type { Shape } from "./tallies";
 /** Whole-number record of a buffer in `State.buffers`: where each field stands. */
 export const buf = {
   level: 0,
-  /** Station-fed: places neither filled nor reserved. Purchased: size - level, negative above it. */
+  /** Station-fed: places neither filled nor reserved. Purchased: size - 1 - level, so negative while it is full. */
   free: 1,
-  /** Tick of this stretch since whose end the level has been 0; means nothing while it is not. */
+  /** Purchased: tick of this stretch since whose end the level has been 0; means nothing while it is not. */
   emptySince: 2,
   /** The same for no free place. */
   fullSince: 3,
-  /** Ticks of this stretch that ended empty, or full, and are over. */
-  empty: 4,
-  full: 5,
+  /** Purchased: ticks of this stretch that ended full and are over. */
+  full: 4,
   /** Purchased: today's cause of a shortage; -1: station-fed. */
-  cause: 6,
+  cause: 5,
   /** Station-fed: record of the first feeding station. */
-  feeder: 7,
+  feeder: 6,
 } as const;
-export const bufStride = 8;
+export const bufStride = 7;
 
 /** Whole-number record of a station in `State.stations`, in the order of service. */
 export const sta = {
-  /** Down ticks left; 0: up. */
+  /** Down ticks left; 0: not drawn yet, if the station is down. */
   down: 0,
-  /** Ticks of up-time left. */
-  up: 1,
-  /** The so many-th finished unit from here is scrap. */
-  scrap: 2,
-  /** Next work amount, an index of `State.work`, and the end of the station's block there. */
+  /** Last tick of this stretch in which the station is up; in later ones it is down. */
+  lastUp: 1,
+  /** What `next` is when a unit that turns out scrap has been started; may lie beyond the block. */
+  scrapAt: 2,
+  /** Next work amount, an index of `State.reals`, and the end of the station's block there. */
   next: 3,
   end: 4,
   /** Record of the output buffer. */
@@ -43,14 +42,18 @@ export const sta = {
   lostTick: 8,
   /** What was lost by: -1 down, else the record of the buffer that lacked. */
   lostBy: 9,
-  /** 1: the clock of the up-time runs always. */
-  always: 10,
+  /** By how much a wholly idle tick moves `lastUp`: 0 where the clock runs always, else 1. */
+  idleStep: 10,
   /** 1: feeds a buffer that customers draw on, so its losses are charged to causes. */
   isCharged: 11,
   /** Cause "down"; "pace" is the next. */
   cause: 12,
+  /** Ends of ticks of this stretch with the output buffer empty, plus 2^16 times those with no free place. */
+  outEnds: 13,
+  /** 1: served last of the stations that feed its output, so that `outEnds` is what the tick ended with. */
+  closesOut: 14,
 } as const;
-export const staStride = 13;
+export const staStride = 15;
 
 /** Fractional record of a station in `State.amounts`. Areas are sums of tick numbers of this stretch. */
 export const amt = {
@@ -62,8 +65,8 @@ export const amt = {
   blocked: 4,
   down: 5,
   scrapped: 6,
-  /** Sum of the scrap gaps drawn; finished units are this less what is left of the last gap. */
-  gaps: 7,
+  /** Units started are this plus `next`. */
+  startedBefore: 7,
 } as const;
 export const amtStride = 8;
 

@@ -66,14 +66,14 @@ function shareStock(
   }
 }
 
-/** Takes units out of a buffer and keeps its empty and full times. */
+/** Takes units out of a buffer and keeps the empty and full times of a purchased one. */
 function takeUnits(buffers: Int32Array, record: number, units: number, t: number): void {
   const level = buffers[record + buf.level] - units;
   const free = buffers[record + buf.free];
   buffers[record + buf.level] = level;
   buffers[record + buf.free] = free + units;
   if (level === 0 && units > 0) buffers[record + buf.emptySince] = t;
-  if (free <= 0 && free + units > 0) buffers[record + buf.full] += t - buffers[record + buf.fullSince];
+  if (free < 0 && free + units >= 0) buffers[record + buf.full] += t - buffers[record + buf.fullSince];
 }
 
 function chargeWaiting(s: State, group: Group, t: number): void {

@@ -1,19 +1,22 @@
 import { createSeedKey, createStreamKey, seedStream, type Key } from "@/lib/random/streams";
 import { wordsPerStream } from "@/lib/random/sfc32";
-import { amt, amtStride, blockLength, buf, bufStride, sta, staStride, type Model } from "./model";
+import { amt, amtStride, blockLength, buf, bufStride, staStride, type Model } from "./model";
 import { clearOrders, createOrders, type Orders } from "./orders";
-import { drawFirstGaps } from "./station-draws";
+import { countFinished, drawFirstGaps } from "./station-draws";
 
 /** Everything that changes in a run. Reset at the start of each replication. */
 export type State = {
   model: Model;
   keys: Key[];
   streams: Int32Array;
-  stations: Int32Array;
-  amounts: Float64Array;
+  /** Records of buffers, of stations, then inputs: the first of these is at 0, the others are views too. */
+  ints: Int32Array;
+  /** Amounts of the stations, then a block of work amounts of each. */
+  reals: Float64Array;
   buffers: Int32Array;
+  stations: Int32Array;
   inputs: Int32Array;
-  work: Float64Array;
+  amounts: Float64Array;
   /** Ticks of one workplace lost to each missing input, by pair of `inputs`. */
   starved: Float64Array;
   /** Ticks charged to each cause. */
@@ -58,11 +61,7 @@ export function createState(model: Model, seed: string): State {
     model,
     keys: model.streams.map(({ node, purpose }) => createStreamKey(seedKey, node, purpose)),
     streams: new Int32Array(model.streams.length * wordsPerStream),
-    stations: new Int32Array(model.stationStart.length),
-    amounts: new Float64Array(model.amountStart.length),
-    buffers: new Int32Array(nBuffers * bufStride),
-    inputs: model.inputs,
-    work: createWork(model),
+    ...createRecords(model),
     starved: new Float64Array(model.inputs.length / 2),
     causes: new Float64Array(model.shape.causes.length),
     shipArea: new Float64Array(nGroups),
@@ -87,11 +86,26 @@ export function createState(model: Model, seed: string): State {
   };
 }
 
-/** Stations without variation have their one amount of work laid out for good. */
-function createWork(model: Model): Float64Array {
-  const work = new Float64Array(model.stations.length * blockLength);
-  model.stations.forEach((station, i) => work.fill(station.work, i * blockLength, (i + 1) * blockLength));
-  return work;
+/** The hot loop reads two arrays only. Stations without variation have their one amount of work laid out for good. */
+function createRecords(model: Model): Pick<State, "ints" | "reals" | "buffers" | "stations" | "inputs" | "amounts"> {
+  const nBuffers = model.buffers.length * bufStride;
+  const nStations = model.stationStart.length;
+  const nAmounts = model.amountStart.length;
+  const ints = new Int32Array(nBuffers + nStations + model.inputs.length);
+  const reals = new Float64Array(nAmounts + model.stations.length * blockLength);
+  const inputs = ints.subarray(nBuffers + nStations);
+  inputs.set(model.inputs);
+  model.stations.forEach((station, i) => {
+    reals.fill(station.work, nAmounts + i * blockLength, nAmounts + (i + 1) * blockLength);
+  });
+  return {
+    ints,
+    reals,
+    buffers: ints.subarray(0, nBuffers),
+    stations: ints.subarray(nBuffers, nBuffers + nStations),
+    inputs,
+    amounts: reals.subarray(0, nAmounts),
+  };
 }
 
 /** Puts the state to the start of one replication: model.md, 2.1. */
@@ -104,7 +118,7 @@ export function resetState(s: State, replication: number): void {
     const at = i * bufStride;
     s.buffers.fill(0, at, at + bufStride);
     s.buffers[at + buf.level] = buffer.startLevel;
-    s.buffers[at + buf.free] = buffer.size - buffer.startLevel;
+    s.buffers[at + buf.free] = buffer.size - buffer.startLevel - (buffer.isPurchased ? 1 : 0);
     s.buffers[at + buf.cause] = buffer.isPurchased ? buffer.sizeCause : -1;
     s.buffers[at + buf.feeder] = buffer.feeder;
   });
@@ -129,11 +143,10 @@ export function clearCounts(s: State): void {
   s.row.fill(0);
   s.starved.fill(0);
   s.causes.fill(0);
-  for (let at = 0; at < s.amounts.length; at += amtStride) {
-    s.amounts[at + amt.blocked] = 0;
-    s.amounts[at + amt.down] = 0;
-    s.amounts[at + amt.scrapped] = 0;
-    // Finished units are counted from here: the gap under way begins anew.
-    s.amounts[at + amt.gaps] = s.stations[(at / amtStride) * staStride + sta.scrap];
+  for (let at = 0, am = 0; am < s.amounts.length; at += staStride, am += amtStride) {
+    s.amounts[am + amt.blocked] = 0;
+    s.amounts[am + amt.down] = 0;
+    s.amounts[am + amt.scrapped] = 0;
+    s.amounts[am + amt.startedBefore] -= countFinished(s, at);
   }
 }

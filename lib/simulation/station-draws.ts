@@ -16,12 +16,11 @@ export function drawFirstGaps(s: State): void {
   s.model.stations.forEach((station, i) => {
     const at = i * staStride;
     refillWork(s, at);
-    s.stations[at + sta.scrap] = drawScrapGap(s, at);
+    s.stations[at + sta.scrapAt] = s.stations[at + sta.next] + drawScrapGap(s, at);
     const { stoppages } = station;
     const stream = station.streams.stoppage * wordsPerStream;
     const startsDown = stoppages && stoppages.startsDown > 0 && nextUniform(s.streams, stream) < stoppages.startsDown;
-    s.stations[at + sta.up] = startsDown ? 1 : drawUpTicks(s, at);
-    s.stations[at + sta.down] = startsDown ? drawDownTicks(s, at) : 0;
+    s.stations[at + sta.lastUp] = startsDown ? -1 : drawUpTicks(s, at) - 1;
   });
 }
 
@@ -31,11 +30,20 @@ export function refillWork(s: State, at: number): number {
   const from = s.stations[at + sta.end] - blockLength;
   if (station.table) {
     const stream = station.streams.work * wordsPerStream;
-    fillWork(station.table, s.streams, stream, station.work, from, blockLength, s.work);
+    fillWork(station.table, s.streams, stream, station.work, from, blockLength, s.reals);
   }
   return from;
 }
 
+/** Turns to the next block of work. */
+export function turnBlock(s: State, at: number): number {
+  s.amounts[(at / staStride) * amtStride + amt.startedBefore] += blockLength;
+  const hasScrap = s.model.stations[at / staStride].scrapRate > 0;
+  s.stations[at + sta.scrapAt] = hasScrap ? s.stations[at + sta.scrapAt] - blockLength : never;
+  return refillWork(s, at);
+}
+
+/** Units until the next one that is scrap, itself included. */
 export function drawScrapGap(s: State, at: number): number {
   const { scrapRate, streams } = s.model.stations[at / staStride];
   return scrapRate > 0 ? nextGap(s.streams, streams.scrap * wordsPerStream, scrapRate) : never;
@@ -46,7 +54,7 @@ export function drawUpTicks(s: State, at: number): number {
   return stoppages ? nextGap(s.streams, streams.stoppage * wordsPerStream, stoppages.upEnds) : never;
 }
 
-/** 0 where the station never stops. */
+/** At least 1; 0 where the station never stops. */
 export function drawDownTicks(s: State, at: number): number {
   const { stoppages, streams } = s.model.stations[at / staStride];
   if (!stoppages) return 0;
@@ -56,13 +64,8 @@ export function drawDownTicks(s: State, at: number): number {
     : nextLognormalTicks(s.streams, stream, stoppages.down.mean, stoppages.down.cv);
 }
 
-/** The up-time is used up: the station is down from the next tick on. */
-export function stopStation(s: State, at: number): void {
-  s.stations[at + sta.down] = drawDownTicks(s, at);
-  s.stations[at + sta.up] = s.stations[at + sta.down] > 0 ? 1 : never;
-}
-
-/** Units finished since `clearCounts`, scrap included. */
+/** Units finished since `clearCounts`, scrap included: those started less the one in work. */
 export function countFinished(s: State, at: number): number {
-  return s.amounts[(at / staStride) * amtStride + amt.gaps] - s.stations[at + sta.scrap];
+  const am = (at / staStride) * amtStride;
+  return s.amounts[am + amt.startedBefore] + s.stations[at + sta.next] - (s.amounts[am + amt.left] === 0 ? 0 : 1);
 }

@@ -1,3 +1,4 @@
+import { never } from "@/lib/random/gaps";
 import { bufferColumn } from "./columns";
 import { amt, amtStride, buf, bufStride, sta, staStride } from "./model";
 import type { State } from "./state";
@@ -16,18 +17,23 @@ export function closeStretch(s: State, n: number): void {
     const b = i * bufStride;
     const at = columns.buffers[i];
     row[at + bufferColumn.level] += buffers[b + buf.level] * n;
-    row[at + bufferColumn.empty] += buffers[b + buf.empty];
+    if (!model.buffers[i].isPurchased) continue;
     row[at + bufferColumn.full] += buffers[b + buf.full];
     if (buffers[b + buf.level] === 0) row[at + bufferColumn.empty] += n - buffers[b + buf.emptySince];
-    if (buffers[b + buf.free] <= 0) row[at + bufferColumn.full] += n - buffers[b + buf.fullSince];
+    if (buffers[b + buf.free] < 0) row[at + bufferColumn.full] += n - buffers[b + buf.fullSince];
     buffers[b + buf.emptySince] = 0;
     buffers[b + buf.fullSince] = 0;
-    buffers[b + buf.empty] = 0;
     buffers[b + buf.full] = 0;
   }
   for (let at = 0, am = 0; at < stations.length; at += staStride, am += amtStride) {
-    const out = stations[at + sta.out] / bufStride;
-    row[columns.buffers[out] + bufferColumn.level] -= amounts[am + amt.goodArea];
+    const out = columns.buffers[stations[at + sta.out] / bufStride];
+    row[out + bufferColumn.level] -= amounts[am + amt.goodArea];
+    if (stations[at + sta.closesOut] === 1) {
+      row[out + bufferColumn.empty] += stations[at + sta.outEnds] & 0xffff;
+      row[out + bufferColumn.full] += stations[at + sta.outEnds] >>> 16;
+    }
+    stations[at + sta.outEnds] = 0;
+    stations[at + sta.lastUp] = model.stations[at / staStride].stoppages ? stations[at + sta.lastUp] - n : never;
     const startArea = amounts[am + amt.startArea];
     for (let i = stations[at + sta.inputs]; i < stations[at + sta.inputsEnd]; i += 2) {
       row[columns.buffers[inputs[i] / bufStride] + bufferColumn.level] += inputs[i + 1] * startArea;
