@@ -4,6 +4,7 @@ import { useState, type FormEvent } from "react";
 import { Button } from "@/components/ui/button";
 import { Dialog, DialogAnswers } from "@/components/ui/dialog";
 import { TextField } from "@/components/ui/text-field";
+import { noAnswer } from "@/lib/client/no-answer";
 import type { ActionResult } from "@/lib/errors";
 
 type Props = {
@@ -41,9 +42,10 @@ function NameForm({ action, initialName, onClose, submit }: Omit<Props, "isOpen"
       return;
     }
     setBusy(true);
-    const result = await submit(trimmed);
+    const result = await submit(trimmed).catch(() => null);
     setBusy(false);
-    if (result.ok) onClose();
+    if (result === null) setError(noAnswer);
+    else if (result.ok) onClose();
     else setError(result.fields?.name ?? result.message);
   }
 

@@ -1,6 +1,7 @@
 "use client";
 
 import { useState } from "react";
+import { noAnswer } from "@/lib/client/no-answer";
 import { Button } from "./button";
 import { Dialog, DialogAnswers } from "./dialog";
 import { ErrorLine } from "./error-line";
@@ -23,16 +24,23 @@ export function ConfirmDialog({ open, onClose, title, description, action, keep 
 
   async function confirm() {
     setBusy(true);
-    const problem = await onConfirm().finally(() => setBusy(false));
-    setError(problem);
-    if (problem === null) onClose();
+    const problem = await onConfirm().catch(() => noAnswer);
+    setBusy(false);
+    if (problem === null) close();
+    else setError(problem);
+  }
+
+  // What went wrong last time says nothing about the next.
+  function close() {
+    setError(null);
+    onClose();
   }
 
   return (
-    <Dialog open={open} onOpenChange={(isOpen) => !isOpen && onClose()} title={title} description={description}>
+    <Dialog open={open} onOpenChange={(isOpen) => !isOpen && close()} title={title} description={description}>
       {error && <ErrorLine className="mt-3">{error}</ErrorLine>}
       <DialogAnswers>
-        <Button onClick={onClose}>{keep}</Button>
+        <Button onClick={close}>{keep}</Button>
         <Button kind="stop" disabled={isBusy} onClick={() => void confirm()}>
           {action}
         </Button>

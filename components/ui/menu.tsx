@@ -50,6 +50,7 @@ type ItemProps = {
   href?: string;
   shortcut?: string;
   disabled?: boolean;
+  /** One of several, of which one holds. */
   isChosen?: boolean;
   children: ReactNode;
 };
@@ -69,7 +70,12 @@ export function MenuItem({ onSelect, href, shortcut, disabled, isChosen, childre
       </a>
     </Radix.Item>
   ) : (
-    <Radix.Item className={cx(item, "cursor-pointer")} onSelect={onSelect} disabled={disabled}>
+    <Radix.Item
+      className={cx(item, "cursor-pointer")}
+      onSelect={onSelect}
+      disabled={disabled}
+      {...(isChosen === undefined ? {} : { role: "menuitemradio", "aria-checked": isChosen })}
+    >
       {content}
     </Radix.Item>
   );

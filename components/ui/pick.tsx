@@ -1,7 +1,9 @@
 "use client";
 
 import { Select as Radix } from "radix-ui";
+import { useId } from "react";
 import { cx } from "./cx";
+import { ErrorLine } from "./error-line";
 import { ChevronIcon, TickIcon } from "./icons";
 
 export type PickOption<T extends string = string> = { value: T; label: string; hint?: string };
@@ -29,10 +31,13 @@ export function Pick<T extends string>({
   error,
   className,
 }: Props<T>) {
+  const id = useId();
   const chosen = options.find((option) => option.value === value);
   const trigger = (
     <Radix.Trigger
       aria-label={`${label}: ${chosen?.label ?? "none"}`}
+      aria-invalid={error !== undefined}
+      aria-describedby={isField && error ? id : undefined}
       className={cx(
         "inline-flex h-8 max-w-full items-center gap-2 rounded-field border border-rule-2 bg-sheet px-2.5 text-left hover:enabled:border-ink disabled:bg-sunk disabled:text-ink-2 max-sm:h-11",
         isField && "w-full",
@@ -48,10 +53,15 @@ export function Pick<T extends string>({
   return (
     <Radix.Root value={value} onValueChange={(next) => onChange(next as T)} disabled={disabled}>
       {isField ? (
-        <span className="block min-w-0">
+        <div className="min-w-0">
           <span className="mb-[3px] block text-s text-ink-2">{label}</span>
           {trigger}
-        </span>
+          {error && (
+            <ErrorLine id={id} className="mt-1">
+              {error}
+            </ErrorLine>
+          )}
+        </div>
       ) : (
         trigger
       )}

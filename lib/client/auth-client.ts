@@ -1,4 +1,5 @@
 import { createAuthClient } from "better-auth/react";
+import { noAnswer } from "./no-answer";
 
 const client = createAuthClient();
 
@@ -25,7 +26,7 @@ function outcome({ error }: Reply): Outcome {
 
 /** A dropped connection is said like any other failure. */
 async function ask(call: Promise<Reply>): Promise<Outcome> {
-  return call.then(outcome, () => "The server did not answer. Check the connection and try again.");
+  return call.then(outcome, () => noAnswer);
 }
 
 export const signIn = (email: string, password: string) => ask(client.signIn.email({ email, password }));

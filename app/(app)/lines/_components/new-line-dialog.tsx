@@ -6,6 +6,7 @@ import { type FormEvent, useState } from "react";
 import { Button } from "@/components/ui/button";
 import { Dialog, DialogAnswers } from "@/components/ui/dialog";
 import { TextField } from "@/components/ui/text-field";
+import { noAnswer } from "@/lib/client/no-answer";
 import { createLineAction } from "../actions";
 
 const starts = [
@@ -35,10 +36,10 @@ function NewLineForm({ onClose }: { onClose(): void }) {
   async function submit(event: FormEvent) {
     event.preventDefault();
     setBusy(true);
-    const result = await createLineAction({ name, from });
-    if (result.ok) router.push(`/lines/${result.value.id}/sketch` as Route);
+    const result = await createLineAction({ name, from }).catch(() => null);
+    if (result?.ok) router.push(`/lines/${result.value.id}/sketch` as Route);
     else {
-      setError(result.fields?.name ?? result.message);
+      setError(result ? (result.fields?.name ?? result.message) : noAnswer);
       setBusy(false);
     }
   }

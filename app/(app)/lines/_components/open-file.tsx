@@ -5,6 +5,7 @@ import { useRouter } from "next/navigation";
 import { useRef, useState } from "react";
 import { type Problem, ProblemDialog } from "@/components/line/problem-dialog";
 import { Button } from "@/components/ui/button";
+import { noAnswer } from "@/lib/client/no-answer";
 import { limits } from "@/lib/line/limits";
 import { createLineAction } from "../actions";
 
@@ -23,9 +24,12 @@ export function OpenFile() {
     }
     setBusy(true);
     const name = file.name.replace(/\.[^.]*$/, "").slice(0, 120) || "Opened line";
-    const result = await createLineAction({ name, from: await file.text() });
+    const text = await file.text().catch(() => null);
+    const result = text === null ? null : await createLineAction({ name, from: text }).catch(() => null);
     setBusy(false);
-    if (result.ok) router.push(`/lines/${result.value.id}/sketch` as Route);
+    if (text === null) fail("It could not be read from the disk: it may have been moved or changed meanwhile.");
+    else if (result === null) fail(noAnswer);
+    else if (result.ok) router.push(`/lines/${result.value.id}/sketch` as Route);
     else fail(result.message);
   }
 
