@@ -27,6 +27,7 @@ export function DistributionChart({ histogram, atRisk, acceptedRisk, width = 640
   const ticks = Array.from({ length: 101 - first }, (_, i) => first + i).filter((p) => p % (step / 5) === 0);
   const name = percentileName(acceptedRisk);
   const isRight = x(mark) > width * 0.55;
+  const isNoteLeft = x(mark) - x(first) > 130;
   return (
     <svg
       viewBox={`0 0 ${width} ${height}`}
@@ -68,7 +69,8 @@ export function DistributionChart({ histogram, atRisk, acceptedRisk, width = 640
           {atRisk.halfWidth !== null && ` ±\u202f${half.toFixed(1)}`}
         </text>
         <text x={x(mark) + (isRight ? -7 : 7)} y={head - 6} fontSize="12" fill="var(--silt-700)">
-          accepted risk: {formatPercent(acceptedRisk, 0)} of weeks lie left
+          {width >= 500 && "accepted risk: "}
+          {formatPercent(acceptedRisk, 0)} of weeks lie left
         </text>
       </g>
       <path d={`M${x(first)} ${height - foot}H${x(100)}`} stroke="var(--ink)" strokeWidth="1.5" />
@@ -83,8 +85,14 @@ export function DistributionChart({ histogram, atRisk, acceptedRisk, width = 640
         </g>
       ))}
       {nLeft > 0 && (
-        <text x={x(first)} y={head + 8} className="axis-text">
-          ← {formatCount(nLeft)} {nLeft === 1 ? "week" : "weeks"} below {first}
+        <text
+          x={isNoteLeft ? x(first) : x(100)}
+          y={head + 6}
+          textAnchor={isNoteLeft ? "start" : "end"}
+          className="axis-text"
+        >
+          {isNoteLeft && "← "}
+          {formatCount(nLeft)} {nLeft === 1 ? "week" : "weeks"} below {first}
         </text>
       )}
     </svg>

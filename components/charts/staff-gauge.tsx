@@ -44,7 +44,14 @@ export function StaffGauge(props: StaffGaugeProps) {
   const bay = width - staff;
   const y = (value: number) => 5 + height - (Math.min(Math.max(value, 0), top) / top) * height;
   return (
-    <svg width={width + 12} height={height + 16} role="img" aria-label={label} className="shrink-0">
+    <svg
+      width={width + 12}
+      height={height + 16}
+      // An image hides what is inside it from screen readers, and with it the slider.
+      role={onSizeChange ? "group" : "img"}
+      aria-label={label}
+      className="shrink-0"
+    >
       <Staff x={staff} height={height} isBig={isBig} top={top} />
       {levels && <Water {...{ levels, size, isPurchased, isBig, bay, y }} x={staff} />}
       <path d={`M${staff} 1V${height + 5}H${staff + bay}V1`} fill="none" stroke="var(--ink)" strokeWidth="1.5" />

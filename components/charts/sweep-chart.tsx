@@ -2,6 +2,7 @@
 
 import { Scale, Shape } from "@visx/visx";
 import { formatCount, formatPercent, percentileName } from "@/lib/format";
+import { useMediaQuery } from "@/lib/client/use-media-query";
 import type { SweepRow } from "@/lib/schema/lines";
 import type { Figure } from "@/lib/simulation/types";
 
@@ -10,13 +11,14 @@ type Props = {
   acceptedRisk: number;
   currentSize: number;
   restSize: number | null;
-  width?: number;
 };
 
 const height = 270;
 
 /** P5, the accepted risk's percentile and P50 against size, with 95 % bands; today's size and the one past which more stops helping. */
-export function SweepChart({ rows, acceptedRisk, currentSize, restSize, width = 680 }: Props) {
+export function SweepChart({ rows, acceptedRisk, currentSize, restSize }: Props) {
+  const isNarrow = useMediaQuery("(max-width: 639px)");
+  const [width, margin] = isNarrow ? [400, 96] : [680, 150];
   if (rows.length < 2) return null;
   const [first, last] = [rows[0].size, rows[rows.length - 1].size];
   const low = Math.min(
@@ -24,8 +26,8 @@ export function SweepChart({ rows, acceptedRisk, currentSize, restSize, width = 
       Math.min(p05.value - (p05.halfWidth ?? 0), atRisk.value - (atRisk.halfWidth ?? 0)),
     ),
   );
-  const from = Math.max(0, Math.floor(low * 20) / 20);
-  const x = Scale.scaleLinear<number>({ domain: [first, last], range: [46, width - 150] });
+  const from = sweepStart(low);
+  const x = Scale.scaleLinear<number>({ domain: [first, last], range: [46, width - margin] });
   const y = Scale.scaleLinear<number>({ domain: [from, 1], range: [height - 30, 10] });
   const name = percentileName(acceptedRisk);
   const series = [
@@ -60,13 +62,17 @@ export function SweepChart({ rows, acceptedRisk, currentSize, restSize, width = 
   const gridStep = 1 - from > 0.5 ? 0.2 : 1 - from > 0.2 ? 0.1 : 0.05;
   const grid = Array.from({ length: 30 }, (_, i) => 1 - i * gridStep).filter((share) => share >= from - 1e-9);
   const label = `Fill rate by size: ${rows.map((row) => `${formatCount(row.size)}: ${name} ${formatPercent(row.atRisk.value)}`).join("; ")}`;
-  const ends = spread(series.map(({ of: read }) => y(read(rows[rows.length - 1]).value) + 4));
+  const ends = spread(
+    series.map(({ of: read }) => y(read(rows[rows.length - 1]).value) + 4),
+    height - 30,
+  );
+  const named = labelled(rows.map(({ size }) => ({ at: x(size), width: 10 + formatCount(size).length * 7 })));
   const isInside = (size: number) => size >= first && size <= last;
   return (
     <svg viewBox={`0 0 ${width} ${height}`} width="100%" className="max-w-[860px]" role="img" aria-label={label}>
       {grid.map((share) => (
         <g key={share}>
-          <path d={`M46 ${y(share)}H${width - 150}`} stroke="var(--rule)" />
+          <path d={`M46 ${y(share)}H${width - margin}`} stroke="var(--rule)" />
           <text x="40" y={y(share) + 4} textAnchor="end" className="axis-text">
             {Math.round(share * 100)}
           </text>
@@ -98,7 +104,7 @@ export function SweepChart({ rows, acceptedRisk, currentSize, restSize, width = 
               strokeWidth="1.5"
             />
           ))}
-          <text x={width - 142} y={ends[i]} fontSize="12.5" fill="var(--ink)">
+          <text x={width - margin + 8} y={ends[i]} fontSize="12.5" fill="var(--ink)">
             <tspan fontWeight="640">{series[i].name}</tspan> {formatPercent(read(rows[rows.length - 1]).value)}
           </text>
         </g>
@@ -114,11 +120,11 @@ export function SweepChart({ rows, acceptedRisk, currentSize, restSize, width = 
       {restSize !== null && isInside(restSize) && restSize !== currentSize && (
         <path d={`M${x(restSize)} 4V${height - 30}`} stroke="var(--ink)" strokeWidth="1.5" />
       )}
-      <path d={`M46 ${height - 30}H${width - 150}`} stroke="var(--ink)" strokeWidth="1.5" />
+      <path d={`M46 ${height - 30}H${width - margin}`} stroke="var(--ink)" strokeWidth="1.5" />
       {rows.map((row, i) => (
         <g key={row.size}>
           <path d={`M${x(row.size)} ${height - 30}v6`} stroke="var(--ink)" />
-          {(rows.length <= 9 || i % Math.ceil(rows.length / 9) === 0) && (
+          {named.has(i) && (
             <text x={x(row.size)} y={height - 9} textAnchor="middle" className="axis-text">
               {formatCount(row.size)}
             </text>
@@ -132,8 +138,23 @@ export function SweepChart({ rows, acceptedRisk, currentSize, restSize, width = 
 const edge = (figure: Figure, sign: 1 | -1) => figure.value + sign * (figure.halfWidth ?? 0);
 const clamp = (share: number, from: number) => Math.min(1, Math.max(from, share));
 
-/** Heights from the top, at least 15 px apart. */
-function spread(wanted: number[]): number[] {
+/** Lower end of the scale: a full twentieth, and never so high that nothing is left to read a value off. */
+export const sweepStart = (low: number) => Math.min(0.95, Math.max(0, Math.floor(low * 20 + 1e-9) / 20));
+
+/** Heights from the top, at least 15 px apart and none below `bottom`. */
+export function spread(wanted: readonly number[], bottom: number): number[] {
   let last = -Infinity;
-  return wanted.map((at) => (last = Math.max(at, last + 15)));
+  const apart = wanted.map((at) => (last = Math.max(at, last + 15)));
+  return apart.map((at, i) => Math.min(at, bottom - 15 * (apart.length - 1 - i)));
+}
+
+/** Which labels, from the left, have room beside those before them. */
+export function labelled(labels: readonly { at: number; width: number }[]): Set<number> {
+  let end = -Infinity;
+  const kept = labels.flatMap(({ at, width }, i) => {
+    if (at - width / 2 < end) return [];
+    end = at + width / 2;
+    return [i];
+  });
+  return new Set(kept);
 }
