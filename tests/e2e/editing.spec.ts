@@ -1,14 +1,11 @@
 import AxeBuilder from "@axe-core/playwright";
 import { expect, test } from "@playwright/test";
-import { lineIdOf, openLine, signIn, watch } from "./helpers";
+import { lineIdOf, makeLine, openLine, signIn, watch } from "./helpers";
 
 test("draws a line of one's own from nothing by keyboard and forms until it runs", async ({ page }) => {
   const { expectQuiet } = watch(page);
   await signIn(page, "engineer");
-  await page.getByRole("button", { name: "New line" }).first().click();
-  await page.getByRole("textbox", { name: "Name" }).fill("Hub motor line");
-  await page.getByRole("button", { name: "Make the line" }).click();
-  await page.waitForURL("**/sketch**");
+  await makeLine(page, "Hub motor line", "An empty sheet");
   await expect(page.getByText("Nothing is drawn yet")).toBeVisible();
 
   const add = async (what: string) => {
@@ -67,7 +64,7 @@ test("a line with faults lists them and points to the nodes", async ({ page }) =
 test("pastes a block of cells into the table as one step of undo", async ({ page, context }) => {
   await context.grantPermissions(["clipboard-read", "clipboard-write"]);
   await signIn(page, "engineer");
-  await openLine(page);
+  await makeLine(page, "Line to paste into", "The example line");
   await page.getByRole("radio", { name: "Table" }).click();
   const cell = page.getByRole("textbox", { name: "Lamination stacks: Size, units" });
   const below = page.getByRole("textbox", { name: "Wire kits: Size, units" });
@@ -85,11 +82,11 @@ test("pastes a block of cells into the table as one step of undo", async ({ page
 
 test("two people editing one scenario: the second save is asked, not lost", async ({ page, browser }) => {
   await signIn(page, "engineer");
-  await openLine(page);
+  await makeLine(page, "Line of two", "The example line");
   const other = await browser.newContext();
   const owner = await other.newPage();
   await signIn(owner, "owner");
-  await openLine(owner);
+  await openLine(owner, "Line of two");
   const sizeOf = (who: typeof page) => who.getByRole("textbox", { name: "Order-up-to level" });
   for (const who of [page, owner]) await who.getByRole("group", { name: /^Housings, purchased buffer/ }).click();
   await sizeOf(page).fill("2500");

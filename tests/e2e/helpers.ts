@@ -26,6 +26,15 @@ export async function openLine(page: Page, name = "Drive unit line") {
   await expect(page.getByRole("link", { name: "Sketch", exact: true })).toBeVisible();
 }
 
+/** A line of the test's own: what one test edits, no other finds. */
+export async function makeLine(page: Page, name: string, from: "An empty sheet" | "The example line") {
+  await page.getByRole("button", { name: "New line" }).first().click();
+  await page.getByRole("radio", { name: new RegExp(`^${from}`) }).check();
+  await page.getByRole("textbox", { name: "Name" }).fill(name);
+  await page.getByRole("button", { name: "Make the line" }).click();
+  await page.waitForURL("**/sketch**");
+}
+
 /** The headline of the result strip, as text. */
 export function headline(page: Page) {
   return page.getByText(/In 9 of 10 weeks we ship at least/).first();

@@ -1,5 +1,5 @@
 import { expect, test } from "@playwright/test";
-import { headline, openLine, signIn, watch } from "./helpers";
+import { headline, makeLine, openLine, signIn, watch } from "./helpers";
 
 test("an engineer changes the line, runs it, compares sizes, keeps and shares; a manager reads the link", async ({
   page,
@@ -89,8 +89,7 @@ test("an engineer changes the line, runs it, compares sizes, keeps and shares; a
 
 test("cancels a run: nothing arrives after it, and the next run works", async ({ page }) => {
   await signIn(page, "engineer");
-  await openLine(page);
-  await expect(headline(page)).toBeVisible();
+  await makeLine(page, "Line to cancel", "The example line");
   await page.getByRole("textbox", { name: "Seed phrase" }).fill("another");
   await page.getByRole("textbox", { name: "Seed phrase" }).blur();
   await page.getByRole("button", { name: /^Run 10.000 weeks/ }).click();
