@@ -1,5 +1,5 @@
 import { ln } from "./elementary";
-import { nextGap } from "./gaps";
+import { lnFailure, nextGap } from "./gaps";
 import { nextUniform } from "./sfc32";
 import { normalScore } from "./whole-quantile";
 
@@ -27,7 +27,8 @@ export function nextBinomial(states: Int32Array, at: number, n: number, probabil
     }
   }
   if (!(p > 0)) return successes;
-  for (let left = n - nextGap(states, at, p); left >= 0; left -= nextGap(states, at, p)) successes++;
+  const failure = lnFailure(p);
+  for (let left = n - nextGap(states, at, failure); left >= 0; left -= nextGap(states, at, failure)) successes++;
   return successes;
 }
 

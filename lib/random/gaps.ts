@@ -6,14 +6,23 @@ import { nextUniform } from "./sfc32";
 export const never = 2 ** 30;
 
 /**
+ * What `nextGap` needs to know of the trials.
+ * @param probability - Of success, > 0.
+ * @returns Logarithm of the chance that a trial fails; -Infinity where the probability is 1 or above.
+ */
+export function lnFailure(probability: number): number {
+  return probability < 1 ? ln1p(-probability) : -Infinity;
+}
+
+/**
  * Number of the first success in a row of independent trials.
- * @param probability - Of success, > 0; at 1 and above the first trial succeeds and nothing is drawn.
+ * @param failure - `lnFailure` of the probability of success; at -Infinity the first trial succeeds and nothing is drawn.
  * @returns Whole, 1..never. One uniform draw otherwise.
  * @remarks Inversion; Devroye, Non-Uniform Random Variate Generation (1986), section X.2.
  */
-export function nextGap(states: Int32Array, at: number, probability: number): number {
-  if (!(probability < 1)) return 1;
-  const gap = Math.floor(ln(nextUniform(states, at)) / ln1p(-probability)) + 1;
+export function nextGap(states: Int32Array, at: number, failure: number): number {
+  if (failure === -Infinity) return 1;
+  const gap = Math.floor(ln(nextUniform(states, at)) / failure) + 1;
   return gap < never ? gap : never;
 }
 

@@ -1,4 +1,5 @@
 import type { Line, Stoppages } from "@/lib/line/types";
+import { lnFailure } from "@/lib/random/gaps";
 import type { Purpose } from "@/lib/random/streams";
 import { getWorkTable } from "@/lib/random/work-table";
 import type { Graph } from "./graph";
@@ -23,7 +24,7 @@ export function compileStations(
       index,
       work: node.cycleMinutes / tickMinutes,
       table: node.cycleCv > 0 ? getWorkTable(node.cycleCv) : null,
-      scrapRate: node.scrapRate,
+      scrap: node.scrapRate > 0 ? lnFailure(node.scrapRate) : null,
       stoppages: node.stoppages && describeStoppages(node.stoppages, tickMinutes),
       streams: {
         work: addStream(node.id, "work"),
@@ -46,7 +47,33 @@ export function compileStations(
     stationStart[at + sta.cause] = causeAt(node.id);
     amountStart[position * amtStride + amt.speed] = node.parallel;
   });
+  const start = graph.buffers.length * bufStride + stationStart.length;
+  graph.serviceOrder.forEach((index, position) => {
+    const at = position * staStride;
+    const isKit = (buffer: number): boolean => isTakenByOneStation(graph, buffer);
+    stationStart[at + sta.kit] = inputs.length;
+    for (const { buffer, quantity } of graph.stationInputs[index]) {
+      if (isKit(buffer)) inputs.push(buffer * bufStride, quantity);
+    }
+    stationStart[at + sta.kitEnd] = inputs.length;
+    stationStart[at + sta.open] = start + inputs.length;
+    for (const { buffer, quantity } of graph.stationInputs[index]) {
+      if (isKit(buffer)) continue;
+      inputs.push(buffer * bufStride, quantity);
+      if (graph.buffers[buffer].replenishment) stationStart[at + sta.sharesStock] = 1;
+    }
+    stationStart[at + sta.openEnd] = start + inputs.length;
+  });
   return { stations, inputs: Int32Array.from(inputs), stationStart, amountStart };
+}
+
+/** Whether a buffer is purchased and one station takes all of it. */
+function isTakenByOneStation(graph: Graph, buffer: number): boolean {
+  return (
+    graph.buffers[buffer].replenishment !== null &&
+    graph.bufferTakers[buffer].length === 1 &&
+    !graph.customerBuffer.includes(buffer)
+  );
 }
 
 function isAlways(stoppages: Stoppages): boolean {
@@ -57,12 +84,15 @@ function isAlways(stoppages: Stoppages): boolean {
 function describeStoppages(stoppages: Stoppages, tickMinutes: number): StationModel["stoppages"] {
   if (stoppages.pattern === "perTick") {
     const up = stoppages.upProbability;
-    return up >= 1 ? null : { startsDown: 1 - up, upEnds: 1 - up, down: { ends: up } };
+    return up >= 1 ? null : { startsDown: 1 - up, upEnds: lnFailure(1 - up), down: { ends: lnFailure(up) } };
   }
   const meanDown = (stoppages.meanDownHours * 60) / tickMinutes;
   return {
     startsDown: 0,
-    upEnds: 1 / Math.max(1, (stoppages.meanUpHours * 60) / tickMinutes),
-    down: stoppages.downCv === null ? { ends: 1 / Math.max(1, meanDown) } : { mean: meanDown, cv: stoppages.downCv },
+    upEnds: lnFailure(1 / Math.max(1, (stoppages.meanUpHours * 60) / tickMinutes)),
+    down:
+      stoppages.downCv === null
+        ? { ends: lnFailure(1 / Math.max(1, meanDown)) }
+        : { mean: meanDown, cv: stoppages.downCv },
   };
 }

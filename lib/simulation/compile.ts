@@ -1,6 +1,7 @@
 import type { Line } from "@/lib/line/types";
 import { prepareDistribution } from "@/lib/random/distributions";
 import { roundHalfUp } from "@/lib/random/elementary";
+import { lnFailure } from "@/lib/random/gaps";
 import type { Purpose } from "@/lib/random/streams";
 import { createWholeQuantile } from "@/lib/random/whole-quantile";
 import { checkNumbers } from "./check-numbers";
@@ -56,8 +57,8 @@ function compile(line: Line): Model {
       correlation: node.correlation,
       keepsSequence: node.keepsSequence,
       disruption: node.disruption && {
-        begins: 1 / node.disruption.meanDaysBetween,
-        ends: 1 / node.disruption.meanDaysLasting,
+        begins: lnFailure(1 / node.disruption.meanDaysBetween),
+        ends: lnFailure(1 / node.disruption.meanDaysLasting),
       },
       rejectRate: node.rejectRate,
       lotRejectRate: node.lotRejectRate,

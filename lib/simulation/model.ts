@@ -52,8 +52,20 @@ export const sta = {
   outEnds: 13,
   /** 1: served last of the stations that feed its output, so that `outEnds` is what the tick ended with. */
   closesOut: 14,
+  /** Kits left until `turnKits` has to look at the purchased parts that this station alone takes; 0: one is missing. */
+  kits: 15,
+  /** `kits` as it was when their levels were last brought up to date. */
+  kitsFrom: 16,
+  /** Those parts: from and to in `Model.inputs`, past the inputs of all stations. */
+  kit: 17,
+  kitEnd: 18,
+  /** The station's other inputs: from and to in `State.ints`. */
+  open: 19,
+  openEnd: 20,
+  /** 1: some of the other inputs are purchased. */
+  sharesStock: 21,
 } as const;
-export const staStride = 15;
+export const staStride = 22;
 
 /** Fractional record of a station in `State.amounts`. Areas are sums of tick numbers of this stretch. */
 export const amt = {
@@ -80,8 +92,9 @@ export type StationModel = {
   work: number;
   /** Null: every unit takes the mean. */
   table: WorkTable | null;
-  scrapRate: number;
-  /** Geometric times by the probability that a tick is the last; `startsDown`: of the very first tick. */
+  /** `lnFailure` of the scrap rate; null: no scrap. */
+  scrap: number | null;
+  /** Geometric times by `lnFailure` of a tick's being the last; `startsDown`: chance of the very first tick. */
   stoppages: null | {
     startsDown: number;
     upEnds: number;
@@ -116,6 +129,7 @@ export type SupplierModel = {
   onTimeShare: number;
   correlation: number;
   keepsSequence: boolean;
+  /** `lnFailure` of a day's chance. */
   disruption: null | { begins: number; ends: number };
   rejectRate: number;
   lotRejectRate: number;

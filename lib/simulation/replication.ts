@@ -5,7 +5,7 @@ import { amt, amtStride, buf, bufStride, sta, staStride, type Model } from "./mo
 import { startDay } from "./start-day";
 import { clearCounts, resetState, type State } from "./state";
 import { countFinished } from "./station-draws";
-import { closeStretch } from "./stretch";
+import { closeStretch, turnAllKits } from "./stretch";
 import { runTicks } from "./tick";
 import type { RunOptions } from "./types";
 import { closeWeek, drawDemand } from "./week";
@@ -26,6 +26,7 @@ export const weekColumns = 3;
 export type RunStretch = (s: State, nTicks: number) => void;
 
 export function runStretch(s: State, nTicks: number): void {
+  turnAllKits(s);
   runTicks(s, nTicks);
   closeStretch(s, nTicks);
 }

@@ -1,5 +1,5 @@
 import { nextBinomial } from "@/lib/random/binomial";
-import { nextGap } from "@/lib/random/gaps";
+import { lnFailure, nextGap } from "@/lib/random/gaps";
 import { nextUniform, wordsPerStream } from "@/lib/random/sfc32";
 import { setPurchasedCauses } from "./causes";
 import { supplierColumn } from "./columns";
@@ -84,13 +84,14 @@ function receiveDeliveries(s: State, i: number): void {
 function countRejects(s: State, i: number, units: number): number {
   const { rejectRate, streams } = s.model.suppliers[i];
   const stream = streams.reject * wordsPerStream;
+  const failure = lnFailure(rejectRate);
   if (units * rejectRate > manyRejects) return nextBinomial(s.streams, stream, units, rejectRate);
   let rejected = 0;
   let left = units;
   while (left >= s.rejectGaps[i]) {
     left -= s.rejectGaps[i];
     rejected++;
-    s.rejectGaps[i] = nextGap(s.streams, stream, rejectRate);
+    s.rejectGaps[i] = nextGap(s.streams, stream, failure);
   }
   s.rejectGaps[i] -= left;
   return rejected;

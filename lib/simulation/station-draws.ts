@@ -1,4 +1,4 @@
-import { nextGap, nextLognormalTicks, never } from "@/lib/random/gaps";
+import { lnFailure, nextGap, nextLognormalTicks, never } from "@/lib/random/gaps";
 import { nextUniform, wordsPerStream } from "@/lib/random/sfc32";
 import { fillWork } from "@/lib/random/work-table";
 import { amt, amtStride, blockLength, sta, staStride } from "./model";
@@ -11,7 +11,8 @@ export function drawFirstGaps(s: State): void {
     s.disruptionGaps[i] = disruption
       ? nextGap(s.streams, streams.disruption * wordsPerStream, disruption.begins)
       : Infinity;
-    s.rejectGaps[i] = rejectRate > 0 ? nextGap(s.streams, streams.reject * wordsPerStream, rejectRate) : Infinity;
+    s.rejectGaps[i] =
+      rejectRate > 0 ? nextGap(s.streams, streams.reject * wordsPerStream, lnFailure(rejectRate)) : Infinity;
   });
   s.model.stations.forEach((station, i) => {
     const at = i * staStride;
@@ -38,15 +39,15 @@ export function refillWork(s: State, at: number): number {
 /** Turns to the next block of work. */
 export function turnBlock(s: State, at: number): number {
   s.amounts[(at / staStride) * amtStride + amt.startedBefore] += blockLength;
-  const hasScrap = s.model.stations[at / staStride].scrapRate > 0;
+  const hasScrap = s.model.stations[at / staStride].scrap !== null;
   s.stations[at + sta.scrapAt] = hasScrap ? s.stations[at + sta.scrapAt] - blockLength : never;
   return refillWork(s, at);
 }
 
 /** Units until the next one that is scrap, itself included. */
 export function drawScrapGap(s: State, at: number): number {
-  const { scrapRate, streams } = s.model.stations[at / staStride];
-  return scrapRate > 0 ? nextGap(s.streams, streams.scrap * wordsPerStream, scrapRate) : never;
+  const { scrap, streams } = s.model.stations[at / staStride];
+  return scrap === null ? never : nextGap(s.streams, streams.scrap * wordsPerStream, scrap);
 }
 
 export function drawUpTicks(s: State, at: number): number {

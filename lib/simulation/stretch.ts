@@ -1,7 +1,13 @@
 import { never } from "@/lib/random/gaps";
 import { bufferColumn } from "./columns";
+import { turnKits } from "./kits";
 import { amt, amtStride, buf, bufStride, sta, staStride } from "./model";
 import type { State } from "./state";
+
+/** Brings the levels up to date that are counted in kits, and counts those that each station has. */
+export function turnAllKits(s: State): void {
+  for (let at = 0; at < s.stations.length; at += staStride) turnKits(s, at, 0);
+}
 
 /**
  * Closes a stretch of ticks: adds its level sums to the row and turns tick numbers over to the next stretch.
@@ -13,6 +19,8 @@ export function closeStretch(s: State, n: number): void {
   const { model, stations, amounts, buffers, inputs, row } = s;
   const columns = model.columns;
   row[columns.ticks] += n;
+  turnAllKits(s);
+  if (s.watched >= 0 && s.ints[s.watched] < s.lowest) s.lowest = s.ints[s.watched];
   for (let i = 0; i < columns.buffers.length; i++) {
     const b = i * bufStride;
     const at = columns.buffers[i];

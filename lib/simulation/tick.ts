@@ -1,4 +1,5 @@
 import { findCause } from "./causes";
+import { turnKits } from "./kits";
 import { amt, amtStride, buf, sta, staStride } from "./model";
 import { serveCustomers } from "./serve-customers";
 import type { State } from "./state";
@@ -13,19 +14,18 @@ export function runTicks(s: State, n: number): void {
   // Literals, each checked by its type: read from the objects, the fields would cost a third of the time.
   const level: typeof buf.level = 0;
   const free: typeof buf.free = 1;
-  const emptySince: typeof buf.emptySince = 2;
-  const fullSince: typeof buf.fullSince = 3;
-  const full: typeof buf.full = 4;
   const lastUp: typeof sta.lastUp = 1;
   const scrapAt: typeof sta.scrapAt = 2;
   const nextWork: typeof sta.next = 3;
   const endWork: typeof sta.end = 4;
   const output: typeof sta.out = 5;
-  const firstInput: typeof sta.inputs = 6;
-  const endInputs: typeof sta.inputsEnd = 7;
   const idleStep: typeof sta.idleStep = 10;
   const outEnds: typeof sta.outEnds = 13;
-  const stationWidth: typeof staStride = 15;
+  const kitsLeft: typeof sta.kits = 15;
+  const firstOpen: typeof sta.open = 19;
+  const endOpen: typeof sta.openEnd = 20;
+  const sharesStock: typeof sta.sharesStock = 21;
+  const stationWidth: typeof staStride = 22;
   const speedOf: typeof amt.speed = 0;
   const leftOf: typeof amt.left = 1;
   const startArea: typeof amt.startArea = 2;
@@ -36,8 +36,9 @@ export function runTicks(s: State, n: number): void {
   const none = 1e-9;
 
   const { ints, reals, watched } = s;
-  const first = s.buffers.length;
-  const end = first + s.stations.length;
+  // `| 0` shows the compiler that the loop stays within 32 bits; without it, it counts in doubles.
+  const first = s.buffers.length | 0;
+  const end = (first + s.stations.length) | 0;
   for (let t = 0; t < n; t++) {
     if (s.owedTotal > 0) serveCustomers(s, t);
     for (let at = first, am = 0; at < end; at += stationWidth, am += amountWidth) {
@@ -49,12 +50,13 @@ export function runTicks(s: State, n: number): void {
         let left = reals[am + leftOf];
         for (;;) {
           if (left === 0) {
-            const from = end + ints[at + firstInput];
-            const to = end + ints[at + endInputs];
-            let i = from;
-            while (i < to && ints[ints[i] + level] >= ints[i + 1]) i += 2;
-            if (i < to) {
-              loseToInput(s, at - first, am, i - end, spare, t);
+            const kits = ints[at + kitsLeft];
+            const from = ints[at + firstOpen];
+            const to = ints[at + endOpen];
+            let i = kits === 0 ? -1 : from;
+            while (i >= 0 && i < to) i = ints[ints[i] + level] >= ints[i + 1] ? i + 2 : -1;
+            if (i < 0) {
+              loseToInput(s, at - first, am, spare, t);
               break;
             }
             const places = ints[out + free] - 1;
@@ -67,13 +69,12 @@ export function runTicks(s: State, n: number): void {
             for (i = from; i < to; i += 2) {
               const input = ints[i];
               const quantity = ints[i + 1];
-              const units = ints[input + level] - quantity;
-              const before = ints[input + free];
-              ints[input + level] = units;
-              ints[input + free] = before + quantity;
-              if (units === 0) ints[input + emptySince] = t;
-              if (before < 0 && before + quantity >= 0) ints[input + full] += t - ints[input + fullSince];
+              ints[input + level] -= quantity;
+              ints[input + free] += quantity;
             }
+            ints[at + kitsLeft] = kits - 1;
+            if (kits === 1) turnKits(s, at - first, t);
+            if (ints[at + sharesStock] === 1) noteShared(s, at - first, t);
             reals[am + startArea] += t;
             let next = ints[at + nextWork];
             if (next === ints[at + endWork]) next = turnBlock(s, at - first);
@@ -116,17 +117,30 @@ function spendDownTick(s: State, at: number, am: number, t: number): void {
   if (down === 0) stations[at + sta.lastUp] = t + drawUpTicks(s, at);
 }
 
-/** The rest of a tick is lost because the input at pair `i` lacks units. */
-function loseToInput(s: State, at: number, am: number, i: number, spare: number, t: number): void {
-  const { stations } = s;
+/** The rest of a tick is lost because an input lacks units: it is charged to the first one in link order. */
+function loseToInput(s: State, at: number, am: number, spare: number, t: number): void {
+  const { stations, inputs, buffers } = s;
   const speed = s.amounts[am + amt.speed];
-  const input = s.inputs[i];
+  let i = stations[at + sta.inputs];
+  while (buffers[inputs[i] + buf.level] >= inputs[i + 1]) i += 2;
   const ticks = spare / speed;
   s.starved[i >> 1] += ticks;
   stations[at + sta.lostTick] = t;
-  stations[at + sta.lostBy] = input;
+  stations[at + sta.lostBy] = inputs[i];
   if (spare === speed) stations[at + sta.lastUp] += stations[at + sta.idleStep];
-  if (stations[at + sta.isCharged] === 1) s.causes[findCause(s, input, t)] += ticks;
+  if (stations[at + sta.isCharged] === 1) s.causes[findCause(s, inputs[i], t)] += ticks;
+}
+
+/** Keeps the empty and full times of purchased parts that others take too, after a unit has been started. */
+function noteShared(s: State, at: number, t: number): void {
+  const { stations, ints } = s;
+  for (let i = stations[at + sta.open]; i < stations[at + sta.openEnd]; i += 2) {
+    const b = ints[i];
+    const free = ints[b + buf.free];
+    if (ints[b + buf.cause] < 0) continue;
+    if (ints[b + buf.level] === 0) ints[b + buf.emptySince] = t;
+    if (free >= 0 && free - ints[i + 1] < 0) ints[b + buf.full] += t - ints[b + buf.fullSince];
+  }
 }
 
 /** A finished unit is scrap: its place is free again. */

@@ -1,7 +1,7 @@
 import { spawnSync } from "node:child_process";
 import path from "node:path";
 import { exampleLine } from "@/lib/line/example";
-import type { Line } from "@/lib/line/types";
+import type { Line, LineNode, NodeKind } from "@/lib/line/types";
 import { simulate } from "@/lib/simulation";
 
 const options = { seed: "1", replications: 200, weeks: 50, warmupWeeks: 12, targetFillRate: 0.95 };
@@ -51,17 +51,41 @@ function referenceSeconds(): number | null {
   return Number(found[1]);
 }
 
-/** So many copies of the demo line side by side, each with nodes of its own. */
-function copies(n: number): Line {
-  const rename = (id: string, i: number) => `${id}-${i}`;
+/** A serial line of `n` stations, 2 n + 3 nodes, whose stations and supplier behave like those of the demo line. */
+function serialLine(n: number): Line {
+  const find = <K extends NodeKind>(kind: K, id: string) => {
+    const found = exampleLine.nodes.find(
+      (node): node is Extract<LineNode, { kind: K }> => node.kind === kind && node.id === id,
+    );
+    if (!found) throw new Error(`the demo line has no ${kind} "${id}"`);
+    return found;
+  };
+  const supplier = find("supplier", "sup-lam");
+  const bought = find("buffer", "lam");
+  const between = find("buffer", "stator");
+  const station = find("station", "wind");
+  const customer = find("customer", "cus-a");
+  const steps = Array.from({ length: n }, (_, i) => i);
   return {
     ...exampleLine,
-    nodes: Array.from({ length: n }, (_, i) =>
-      exampleLine.nodes.map((node) => ({ ...node, id: rename(node.id, i) })),
-    ).flat(),
-    links: Array.from({ length: n }, (_, i) =>
-      exampleLine.links.map((link) => ({ ...link, from: rename(link.from, i), to: rename(link.to, i) })),
-    ).flat(),
+    overtime: null,
+    nodes: [
+      { ...supplier, share: 1 },
+      bought,
+      ...steps.flatMap((i): LineNode[] => [
+        { ...station, id: `station-${i}`, scrapRate: 0.001 },
+        { ...between, id: `buffer-${i}` },
+      ]),
+      customer,
+    ],
+    links: [
+      { from: supplier.id, to: bought.id },
+      ...steps.flatMap((i) => [
+        { from: i === 0 ? bought.id : `buffer-${i - 1}`, to: `station-${i}` },
+        { from: `station-${i}`, to: `buffer-${i}` },
+      ]),
+      { from: `buffer-${n - 1}`, to: customer.id },
+    ],
   };
 }
 
@@ -80,10 +104,18 @@ console.log(
 );
 if (reference.length > 0)
   console.log(`C reference, in turns: ratio ${(median(reference) / seconds).toFixed(2)} of its speed`);
-const perUpdate = [1, 4, 10].map((n) => {
-  const line = copies(n);
-  const used = cpuSeconds(() => simulate(line, { ...options, replications: 20 }));
-  return { nodes: line.nodes.length, ns: (used / (countUpdates(line) / 10)) * 1e9 };
-});
+/** As many node-updates whatever the length, so that one length is measured as well as the other. */
+function measureSerial(n: number): { nodes: number; ns: number } {
+  const line = serialLine(n);
+  const replications = Math.max(1, Math.round(1_200 / (n + 1)));
+  const run = () => simulate(line, { ...options, replications });
+  run();
+  const used = median(Array.from({ length: turns }, () => cpuSeconds(run)));
+  return { nodes: line.nodes.length, ns: (used / ((countUpdates(line) * replications) / options.replications)) * 1e9 };
+}
+
+const perUpdate = [4, 14, 49, 149].map(measureSerial);
 for (const { nodes, ns } of perUpdate)
-  console.log(`${nodes} nodes: ${ns.toFixed(1)} ns a node-update, ${(ns / perUpdate[0].ns).toFixed(2)} of the first`);
+  console.log(
+    `serial line of ${nodes} nodes: ${ns.toFixed(1)} ns a node-update, ${(ns / perUpdate[0].ns).toFixed(2)} of the first`,
+  );

@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { nextBinomial } from "@/lib/random/binomial";
-import { nextGap, nextLognormalTicks } from "@/lib/random/gaps";
+import { lnFailure, nextGap, nextLognormalTicks } from "@/lib/random/gaps";
 import { fillWork, getWorkTable } from "@/lib/random/work-table";
 
 const n = 100_000;
@@ -21,11 +21,11 @@ function moments(draw: () => number): { mean: number; variance: number } {
 describe("nextGap", () => {
   it("is geometric from 1", () => {
     const states = Int32Array.of(11, 12, 13, 1);
-    const { mean, variance } = moments(() => nextGap(states, 0, 0.03));
+    const { mean, variance } = moments(() => nextGap(states, 0, lnFailure(0.03)));
     assertWithin(mean, 1 / 0.03, 4 * Math.sqrt(0.97 / 0.0009 / n));
     // Fourth central moment of a geometric, about 9 variances squared.
     assertWithin(variance, 0.97 / 0.0009, 4 * (0.97 / 0.0009) * Math.sqrt(8.1 / n));
-    expect(nextGap(states, 0, 1)).toBe(1);
+    expect(nextGap(states, 0, lnFailure(1))).toBe(1);
   });
 });
 
