@@ -2,14 +2,15 @@
 
 import { useState } from "react";
 import useSWR from "swr";
-import { FillRateRuler, rulerStart } from "@/components/charts/fill-rate-ruler";
+import { ReadingRuler, rulerStartOf } from "@/components/charts/reading-ruler";
 import { ShareDialog } from "@/components/share/share-dialog";
 import { Button } from "@/components/ui/button";
 import { ErrorLine } from "@/components/ui/error-line";
+import { Fact } from "@/components/ui/fact";
 import { describeError, fetchJson, scenarioKey } from "@/lib/client/api";
 import { useLine } from "@/lib/client/line-state";
 import { formatMoneyFigure, formatShare, percentileName } from "@/lib/format";
-import { differences } from "@/lib/line/diff";
+import { fewDifferences } from "@/lib/line/few-differences";
 import type { ScenarioDetail, ScenarioSummary } from "@/lib/schema/lines";
 
 /** Scenarios of the line as kept, on one scale. */
@@ -24,9 +25,7 @@ export function ScenarioRows() {
   const [chosen, setChosen] = useState<readonly string[]>([]);
   const [isSharing, setSharing] = useState(false);
   const base = data?.find(({ isBase }) => isBase);
-  const from = rulerStart(
-    ...line.scenarios.flatMap(({ reading }) => (reading ? [reading.p05.value, reading.atRisk.value] : [])),
-  );
+  const from = rulerStartOf(line.scenarios.map(({ reading }) => reading));
   const comparison = chosen.flatMap((id) => {
     const detail = data?.find((one) => one.id === id);
     return detail?.kept.reading ? [{ versionId: detail.kept.id, name: detail.name }] : [];
@@ -72,9 +71,7 @@ export function ScenarioRows() {
 function describeDifference(base: ScenarioDetail | undefined, other: ScenarioDetail | undefined): string[] {
   if (!base || !other) return [];
   if (other.isBase) return ["what the others are held against"];
-  const found = differences(base.kept.document, other.kept.document).map(({ text }) => text);
-  if (found.length === 0) return ["the same line as the base"];
-  return found.length > 4 ? [...found.slice(0, 3), `and ${found.length - 3} more`] : found;
+  return fewDifferences(base.kept.document, other.kept.document);
 }
 
 type RowProps = {
@@ -111,14 +108,7 @@ function ScenarioRow({ scenario: { name, isBase, reading }, from, differs, isCho
       </div>
       {reading ? (
         <>
-          <FillRateRuler
-            p05={reading.p05.value}
-            atRisk={reading.atRisk}
-            p50={reading.p50.value}
-            acceptedRisk={reading.acceptedRisk}
-            from={from}
-            hasWhisker
-          />
+          <ReadingRuler reading={reading} from={from} hasWhisker />
           <Fact name={percentileName(reading.acceptedRisk)} text={formatShare(reading.atRisk)} />
           <Fact name={`Capital, ${reading.currency}`} text={formatMoneyFigure(reading.moneyTiedUp)} />
           <Fact name="Cost a year" text={formatMoneyFigure(reading.costPerYear)} />
@@ -127,14 +117,5 @@ function ScenarioRow({ scenario: { name, isBase, reading }, from, differs, isCho
         <p className="text-ink-3 lg:col-span-4">No full run is kept with it yet.</p>
       )}
     </li>
-  );
-}
-
-function Fact({ name, text: { value, spread } }: { name: string; text: { value: string; spread: string | null } }) {
-  return (
-    <p className="whitespace-nowrap">
-      <span className="block text-s text-ink-3">{name}</span>
-      <b className="font-[620]">{value}</b> <span className="text-s text-ink-3">{spread}</span>
-    </p>
   );
 }

@@ -1,9 +1,13 @@
-import { formatShare } from "@/lib/format";
+import { formatShare, percentileName } from "@/lib/format";
 import type { DraftLine } from "@/lib/line/types";
+import { percentile } from "@/lib/simulation";
 import type { Figure, RunResult } from "@/lib/simulation/types";
+import { ReadingTable, RowName } from "./reading-table";
+
+type Props = { result: RunResult; document: DraftLine; acceptedRisk: number };
 
 /** Each customer on its own; with one customer the whole says it already. */
-export function CustomerTable({ result, document }: { result: RunResult; document: DraftLine }) {
+export function CustomerTable({ result, document, acceptedRisk }: Props) {
   const customers = document.nodes.filter((node) => node.kind === "customer" && result.customers[node.id]);
   if (customers.length < 2) return null;
   const cell = (figure: Figure) => {
@@ -15,32 +19,19 @@ export function CustomerTable({ result, document }: { result: RunResult; documen
     );
   };
   return (
-    <section className="overflow-x-auto" tabIndex={0}>
-      <h2 className="figure-title">Customers</h2>
-      <table className="sheet-table mt-1">
-        <thead>
-          <tr>
-            <th scope="col">Customer</th>
-            {["P10", "Mean", "Weeks below target"].map((head) => (
-              <th key={head} scope="col" className="text-right!">
-                {head}
-              </th>
-            ))}
-          </tr>
-        </thead>
-        <tbody>
-          {customers.map(({ id, name }) => (
-            <tr key={id}>
-              <th scope="row" className="text-left font-text!">
-                {name}
-              </th>
-              {cell(result.customers[id].p10)}
-              {cell(result.customers[id].mean)}
-              {cell(result.customers[id].risk)}
-            </tr>
-          ))}
-        </tbody>
-      </table>
-    </section>
+    <ReadingTable
+      title="Customers"
+      first="Customer"
+      heads={[percentileName(acceptedRisk), "Mean", "Weeks below target"]}
+    >
+      {customers.map(({ id, name }) => (
+        <tr key={id}>
+          <RowName>{name}</RowName>
+          {cell(percentile(result, acceptedRisk, id))}
+          {cell(result.customers[id].mean)}
+          {cell(result.customers[id].risk)}
+        </tr>
+      ))}
+    </ReadingTable>
   );
 }

@@ -1,21 +1,18 @@
 "use client";
 
-import { useEffect, useMemo, useRef, useState } from "react";
+import { useMemo, useState } from "react";
 import { FanChart } from "@/components/charts/fan-chart";
 import { Button } from "@/components/ui/button";
 import { ErrorLine } from "@/components/ui/error-line";
 import { Pick } from "@/components/ui/pick";
 import { type Reading, useLine } from "@/lib/client/line-state";
+import { useJob } from "@/lib/client/use-job";
 import { useMediaQuery } from "@/lib/client/use-media-query";
 import { useSimulation } from "@/lib/client/use-simulation";
 import { formatCount } from "@/lib/format";
 import { fanOf } from "./fan";
 
-type State =
-  | { status: "idle" }
-  | { status: "running"; share: number }
-  | { status: "done"; key: string; name: string; weeks: ReturnType<typeof fanOf> }
-  | { status: "failed"; message: string };
+type Drawn = { key: string; name: string; weeks: ReturnType<typeof fanOf> };
 
 /** Lowest stock of each week for one buffer, over the replications; run again from the seed when asked for. */
 export function LowestStock({ reading }: { reading: Reading }) {
@@ -24,32 +21,22 @@ export function LowestStock({ reading }: { reading: Reading }) {
   const isNarrow = useMediaQuery("(max-width: 639px)");
   const buffers = useMemo(() => parsed?.nodes.filter((node) => node.kind === "buffer") ?? [], [parsed]);
   const [wanted, setWanted] = useState<string | null>(null);
-  const [state, setState] = useState<State>({ status: "idle" });
-  const abort = useRef<AbortController | null>(null);
-  useEffect(() => () => abort.current?.abort(), []);
+  const { state, start, cancel } = useJob<number, Drawn>();
   const buffer = buffers.find(({ id }) => id === wanted) ?? buffers[0];
   if (!parsed || !buffer) return null;
   const { warmupWeeks, ...rest } = reading.result.options;
   const options = { warmupWeeks, ...rest };
   const key = JSON.stringify([digest, options, buffer.id]);
-  const isOther = state.status === "done" && state.key !== key;
+  const isOther = state.status === "done" && state.value.key !== key;
 
-  async function run() {
-    if (!parsed || !buffer) return;
-    abort.current?.abort();
-    const own = (abort.current = new AbortController());
-    setState({ status: "running", share: 0 });
-    try {
+  const run = () =>
+    start(0, async (signal, onProgress) => {
       const levels = await client.lowestLevels(parsed, options, buffer.id, {
-        signal: own.signal,
-        onProgress: ({ replications, total }) => setState({ status: "running", share: replications / total }),
+        signal,
+        onProgress: ({ replications, total }) => onProgress(replications / total),
       });
-      setState({ status: "done", key, name: buffer.name, weeks: fanOf(levels) });
-    } catch (error) {
-      if (own.signal.aborted) return setState({ status: "idle" });
-      setState({ status: "failed", message: error instanceof Error ? error.message : String(error) });
-    }
-  }
+      return { key, name: buffer.name, weeks: fanOf(levels) };
+    });
 
   return (
     <figure>
@@ -61,7 +48,7 @@ export function LowestStock({ reading }: { reading: Reading }) {
           options={buffers.map(({ id, name }) => ({ value: id, label: name }))}
           onChange={(id) => {
             setWanted(id);
-            setState({ status: "idle" });
+            cancel();
           }}
         />
         <span className="ml-auto text-s text-ink-3">units, from the start</span>
@@ -69,16 +56,16 @@ export function LowestStock({ reading }: { reading: Reading }) {
       {state.status === "done" && (
         <FanChart
           width={isNarrow ? 400 : 520}
-          weeks={state.weeks}
+          weeks={state.value.weeks}
           nWarmup={warmupWeeks}
-          label={describeFan(state.name, state.weeks)}
+          label={describeFan(state.value.name, state.value.weeks)}
         />
       )}
       {state.status === "running" && (
         <p role="status" className="py-4 text-ink-2">
-          Running {formatCount(Math.round(state.share * options.replications))} of {formatCount(options.replications)}{" "}
-          replications{" "}
-          <Button size="small" kind="stop" onClick={() => abort.current?.abort()}>
+          Running {formatCount(Math.round(state.progress * options.replications))} of{" "}
+          {formatCount(options.replications)} replications{" "}
+          <Button size="small" kind="stop" onClick={cancel}>
             Cancel
           </Button>
         </p>

@@ -1,7 +1,7 @@
 "use client";
 
 import { useMemo } from "react";
-import { formatCount, formatShare, oneIn, percentileName } from "@/lib/format";
+import { formatChosenPercent, formatCount, formatShare, oneIn, percentileName } from "@/lib/format";
 import { percentile } from "@/lib/simulation";
 import type { Figure, RunResult } from "@/lib/simulation/types";
 
@@ -60,10 +60,10 @@ export function PercentileTable({ result, acceptedRisk }: { result: RunResult; a
         </tbody>
       </table>
       <p className="mt-2 text-s text-ink-3">
-        Below the target of {Math.round(targetFillRate * 1000) / 10}
-        {"\u202f%"}: {risk.value} of weeks {risk.spread}. ± is the half-width at 95{"\u202f%"}, from{" "}
-        {formatCount(Math.min(20, replications))} sections of {formatCount(replications)} separate runs of{" "}
-        {formatCount(weeks)} weeks, each after {formatCount(warmupWeeks)} weeks of warm-up.
+        Below the target of {formatChosenPercent(targetFillRate)}: {risk.value} of weeks {risk.spread}. ± is the
+        half-width at 95{"\u202f%"}, from {formatCount(Math.min(20, replications))} sections of{" "}
+        {formatCount(replications)} separate runs of {formatCount(weeks)} weeks, each after {formatCount(warmupWeeks)}{" "}
+        weeks of warm-up.
       </p>
     </section>
   );

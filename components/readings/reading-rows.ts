@@ -1,4 +1,5 @@
 import type { Cell } from "@/components/charts/take-out-figures";
+import { percentileName } from "@/lib/format";
 import type { DraftLine } from "@/lib/line/types";
 import { percentile } from "@/lib/simulation";
 import type { Figure, RunResult } from "@/lib/simulation/types";
@@ -12,7 +13,7 @@ export function readingRows(result: RunResult, document: DraftLine): Cell[][] {
   const nameOf = (id: string) => document.nodes.find((node) => node.id === id)?.name ?? id;
   return [
     ["group", "figure", "value", "half-width at 95 %"],
-    ...[0.01, 0.05, 0.1, 0.2, 0.25, 0.5].map((p) => row("weekly fill rate", `P${p * 100}`, percentile(result, p))),
+    ...[0.01, 0.05, 0.1, 0.2, 0.25, 0.5].map((p) => row("weekly fill rate", percentileName(p), percentile(result, p))),
     row("weekly fill rate", "mean", summary.mean),
     row("weekly fill rate", "share of weeks below target", summary.risk),
     row("weekly fill rate", "share of weeks in full", summary.weeksInFull),

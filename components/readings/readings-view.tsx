@@ -7,7 +7,7 @@ import { Button } from "@/components/ui/button";
 import { Empty } from "@/components/ui/empty";
 import { Pick } from "@/components/ui/pick";
 import { type Reading, useLine } from "@/lib/client/line-state";
-import { formatPercent } from "@/lib/format";
+import { formatChosenPercent } from "@/lib/format";
 import { describeAbout } from "@/lib/line/describe-fault";
 import { CauseList } from "./cause-list";
 import { CostList } from "./cost-list";
@@ -36,7 +36,7 @@ export function ReadingsView() {
           disabled={!mayEdit}
           options={choices.map((risk) => ({
             value: String(risk),
-            label: formatPercent(risk, risk * 100 === Math.round(risk * 100) ? 0 : 1),
+            label: formatChosenPercent(risk),
           }))}
           onChange={(value) => setOptions({ acceptedRisk: Number(value) })}
         />
@@ -81,7 +81,7 @@ function Figures({ reading, isCurrent }: { reading: Reading; isCurrent: boolean 
       <div className="mt-6 grid gap-y-6 border-t border-ink pt-4 lg:grid-cols-2 [&>*]:min-w-0 lg:[&>*+*]:border-l lg:[&>*+*]:border-rule lg:[&>*+*]:pl-5 lg:[&>*]:pr-5">
         <SupplierTable result={result} document={document} />
         <div className="space-y-6">
-          <CustomerTable result={result} document={document} />
+          <CustomerTable result={result} document={document} acceptedRisk={options.acceptedRisk} />
           <RunAgain />
         </div>
       </div>

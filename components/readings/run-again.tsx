@@ -1,38 +1,28 @@
 "use client";
 
-import { useEffect, useRef, useState } from "react";
 import { Button } from "@/components/ui/button";
 import { ErrorLine } from "@/components/ui/error-line";
 import { Progress } from "@/components/ui/progress";
-import { describeError, fetchBytes, resultKey } from "@/lib/client/api";
+import { fetchBytes, resultKey } from "@/lib/client/api";
 import { useLine } from "@/lib/client/line-state";
+import { useJob } from "@/lib/client/use-job";
 import { useSimulation } from "@/lib/client/use-simulation";
 import { formatCount } from "@/lib/format";
 import { parseLine } from "@/lib/line";
 import { decodeResult } from "@/lib/simulation";
 import { compareResults, type Verdict } from "./compare-results";
 
-type State =
-  | { status: "idle" }
-  | { status: "running"; share: number }
-  | { status: "done"; verdict: Verdict }
-  | { status: "failed"; message: string };
-
 /** Recomputes the last kept version from its document, options and seed phrase, and says whether the figures are the same. */
 export function RunAgain() {
   const { scenario } = useLine();
   const client = useSimulation();
   const { kept } = scenario;
-  const [state, setState] = useState<State>({ status: "idle" });
-  const abort = useRef<AbortController | null>(null);
-  useEffect(() => () => abort.current?.abort(), []);
+  const { state, start, cancel } = useJob<number, Verdict>();
   if (!kept.reading) return null;
   const { resultId } = kept.reading;
 
-  async function run() {
-    const own = (abort.current = new AbortController());
-    setState({ status: "running", share: 0 });
-    try {
+  const run = () =>
+    start(0, async (signal, onProgress) => {
       const parsed = parseLine(kept.document);
       if ("faults" in parsed) throw new Error("This version can no longer be run: it has faults by today’s rules.");
       const stored = decodeResult(await fetchBytes(resultKey(resultId)));
@@ -40,17 +30,10 @@ export function RunAgain() {
       const fresh = await client.run(
         parsed.line,
         { seed, replications, weeks, warmupWeeks, targetFillRate },
-        {
-          signal: own.signal,
-          onProgress: (done) => setState({ status: "running", share: done.replications / done.total }),
-        },
+        { signal, onProgress: (done) => onProgress(done.replications / done.total) },
       );
-      setState({ status: "done", verdict: compareResults(stored, fresh) });
-    } catch (error) {
-      if (own.signal.aborted) return setState({ status: "idle" });
-      setState({ status: "failed", message: describeError(error) });
-    }
-  }
+      return compareResults(stored, fresh);
+    });
 
   return (
     <section>
@@ -63,15 +46,15 @@ export function RunAgain() {
       {state.status === "running" && (
         <div className="mt-2 flex items-center gap-3">
           <div className="flex-1">
-            <Progress share={state.share} label="Running the kept version again" />
+            <Progress share={state.progress} label="Running the kept version again" />
           </div>
-          <Button size="small" kind="stop" onClick={() => abort.current?.abort()}>
+          <Button size="small" kind="stop" onClick={cancel}>
             Cancel
           </Button>
         </div>
       )}
       {state.status === "done" && (
-        <VerdictLine verdict={state.verdict} weeks={kept.options.replications * kept.options.weeks} />
+        <VerdictLine verdict={state.value} weeks={kept.options.replications * kept.options.weeks} />
       )}
       {state.status === "failed" && <ErrorLine className="mt-2">{state.message}</ErrorLine>}
       {state.status !== "running" && (

@@ -1,5 +1,5 @@
-import { FillRateRuler } from "@/components/charts/fill-rate-ruler";
-import { formatMoneyFigure, formatShare, headlineSentence } from "@/lib/format";
+import { ReadingRuler } from "@/components/charts/reading-ruler";
+import { formatChosenPercent, formatMoneyFigure, formatShare, headlineSentence } from "@/lib/format";
 import type { SharedVersion } from "@/lib/schema/lines";
 
 /** The sentence first, then risk and money. */
@@ -8,7 +8,7 @@ export function KeyFigures({ version: { reading, scenarioName, options } }: { ve
   const said = headlineSentence(reading.atRisk, reading.acceptedRisk);
   const { spread } = formatShare(reading.atRisk);
   const facts = [
-    { name: `Weeks below ${Math.round(options.targetFillRate * 1000) / 10}\u202f%`, text: formatShare(reading.risk) },
+    { name: `Weeks below ${formatChosenPercent(options.targetFillRate)}`, text: formatShare(reading.risk) },
     { name: `Capital tied up, ${reading.currency}`, text: formatMoneyFigure(reading.moneyTiedUp) },
     { name: `Cost a year, ${reading.currency}`, text: formatMoneyFigure(reading.costPerYear) },
   ];
@@ -24,12 +24,7 @@ export function KeyFigures({ version: { reading, scenarioName, options } }: { ve
         </p>
       )}
       <div className="mt-4 grid items-end gap-x-8 gap-y-4 sm:grid-cols-[minmax(0,1.4fr)_repeat(3,auto)]">
-        <FillRateRuler
-          p05={reading.p05.value}
-          atRisk={reading.atRisk}
-          p50={reading.p50.value}
-          acceptedRisk={reading.acceptedRisk}
-        />
+        <ReadingRuler reading={reading} />
         {facts.map(({ name, text }) => (
           <p
             key={name}

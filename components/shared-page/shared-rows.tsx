@@ -1,13 +1,12 @@
-import { FillRateRuler, rulerStart } from "@/components/charts/fill-rate-ruler";
+import { ReadingRuler, rulerStartOf } from "@/components/charts/reading-ruler";
+import { Fact } from "@/components/ui/fact";
 import { formatMoneyFigure, formatShare, percentileName } from "@/lib/format";
-import { differences } from "@/lib/line/diff";
+import { fewDifferences } from "@/lib/line/few-differences";
 import type { SharedVersion } from "@/lib/schema/lines";
 
 /** Kept versions on one scale; what differs from the first in words. */
 export function SharedRows({ versions }: { versions: readonly SharedVersion[] }) {
-  const from = rulerStart(
-    ...versions.flatMap(({ reading }) => (reading ? [reading.p05.value, reading.atRisk.value] : [])),
-  );
+  const from = rulerStartOf(versions.map(({ reading }) => reading));
   return (
     <section>
       <h1 className="border-b border-ink pb-1 text-2xl font-title tracking-[-.015em]">
@@ -25,13 +24,7 @@ export function SharedRows({ versions }: { versions: readonly SharedVersion[] })
             </div>
             {version.reading ? (
               <>
-                <FillRateRuler
-                  p05={version.reading.p05.value}
-                  atRisk={version.reading.atRisk}
-                  p50={version.reading.p50.value}
-                  acceptedRisk={version.reading.acceptedRisk}
-                  from={from}
-                />
+                <ReadingRuler reading={version.reading} from={from} />
                 <Fact name={percentileName(version.reading.acceptedRisk)} text={formatShare(version.reading.atRisk)} />
                 <Fact
                   name={`Capital, ${version.reading.currency}`}
@@ -49,25 +42,10 @@ export function SharedRows({ versions }: { versions: readonly SharedVersion[] })
 }
 
 function Differs({ from, to, isFirst }: { from: SharedVersion; to: SharedVersion; isFirst: boolean }) {
-  if (isFirst) return <p className="text-s text-ink-2">what the others are held against</p>;
-  const found = differences(from.document, to.document).map(({ text }) => text);
-  const shown = found.length > 5 ? [...found.slice(0, 4), `and ${found.length - 4} more`] : found;
-  return (
-    <>
-      {shown.map((text) => (
-        <p key={text} className="text-s text-ink-2">
-          {text}
-        </p>
-      ))}
-    </>
-  );
-}
-
-function Fact({ name, text }: { name: string; text: { value: string; spread: string | null } }) {
-  return (
-    <p className="whitespace-nowrap">
-      <span className="block text-s text-ink-3">{name}</span>
-      <b className="font-[620]">{text.value}</b> <span className="text-s text-ink-3">{text.spread}</span>
+  const said = isFirst ? ["what the others are held against"] : fewDifferences(from.document, to.document);
+  return said.map((text) => (
+    <p key={text} className="text-s text-ink-2">
+      {text}
     </p>
-  );
+  ));
 }

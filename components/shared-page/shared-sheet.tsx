@@ -90,7 +90,7 @@ function Version({
             <CauseList result={result} document={document} />
             <CostList result={result} document={document} />
           </div>
-          <CustomerTable result={result} document={document} />
+          <CustomerTable result={result} document={document} acceptedRisk={options.acceptedRisk} />
         </>
       )}
       <section>

@@ -2,6 +2,7 @@ export { formatDate, formatDateTime, formatTime } from "./dates";
 export { type FigureText, formatAmount, formatMoneyFigure, formatShare, spreadText } from "./figures";
 export {
   decimalsFor,
+  formatChosenPercent,
   formatCount,
   formatMoney,
   formatNumber,

@@ -21,6 +21,11 @@ export function formatPercent(share: number, decimals = 1): string {
   return Number.isFinite(share) ? `${formatNumber(share * 100, decimals)}${thinSpace}%` : "–";
 }
 
+/** A share someone chose, with no more decimals than it has: 0.95 is "95 %", 0.975 is "97.5 %". */
+export function formatChosenPercent(share: number): string {
+  return `${Math.round(share * 1000) / 10}${thinSpace}%`;
+}
+
 /** Money rounded to hundreds, to tens below 1 000 and to units below 100; with the currency before it where given. */
 export function formatMoney(value: number, currency?: string): string {
   const size = Math.abs(value);

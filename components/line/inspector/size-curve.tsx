@@ -1,9 +1,9 @@
 "use client";
 
-import { useEffect, useRef, useState } from "react";
 import { Button } from "@/components/ui/button";
 import { ErrorLine } from "@/components/ui/error-line";
 import { useLine } from "@/lib/client/line-state";
+import { useJob } from "@/lib/client/use-job";
 import { useSimulation } from "@/lib/client/use-simulation";
 import { formatCount, formatPercent, percentileName } from "@/lib/format";
 import type { DraftOf, Line } from "@/lib/line/types";
@@ -12,11 +12,8 @@ import { withSize } from "@/lib/sizing/with-size";
 import type { Figure } from "@/lib/simulation/types";
 
 type Point = { size: number; figure: Figure };
-type State =
-  | { status: "idle" }
-  | { status: "running"; points: Point[] }
-  | { status: "done"; points: Point[]; digest: string }
-  | { status: "failed"; message: string };
+/** `digest` of the line it was drawn for. */
+type Drawn = { points: Point[]; digest: string | null };
 
 const shares = [0.7, 0.85, 1, 1.15, 1.3];
 
@@ -24,41 +21,31 @@ const shares = [0.7, 0.85, 1, 1.15, 1.3];
 export function SizeCurve({ node }: { node: DraftOf<"buffer"> }) {
   const { parsed, digest, options } = useLine();
   const client = useSimulation();
-  const [state, setState] = useState<State>({ status: "idle" });
-  const abort = useRef<AbortController | null>(null);
-  useEffect(() => () => abort.current?.abort(), []);
-  const isStale = state.status === "done" && state.digest !== digest;
+  const { state, start } = useJob<Point[], Drawn>();
+  const isStale = state.status === "done" && state.value.digest !== digest;
+  const points = state.status === "running" ? state.progress : state.status === "done" ? state.value.points : [];
   if (!parsed || node.size === null) return null;
 
-  async function draw(line: Line, size: number) {
-    abort.current?.abort();
-    const own = (abort.current = new AbortController());
-    const points: Point[] = [];
-    setState({ status: "running", points });
-    try {
+  const draw = (line: Line, size: number) =>
+    start([], async (signal, onProgress) => {
+      const points: Point[] = [];
       for (const next of new Set(shares.map((share) => Math.max(1, Math.round(size * share))))) {
         const result = await client.run(
           withSize(line, node.id, next),
           { ...runOptions(options), replications: 20 },
-          { signal: own.signal },
+          { signal },
         );
         points.push({ size: next, figure: percentile(result, options.acceptedRisk) });
-        setState({ status: "running", points: [...points] });
+        onProgress([...points]);
       }
-      setState({ status: "done", points, digest: digest ?? "" });
-    } catch (error) {
-      if (own.signal.aborted) return;
-      setState({ status: "failed", message: error instanceof Error ? error.message : String(error) });
-    }
-  }
+      return { points, digest };
+    });
 
   const name = percentileName(options.acceptedRisk);
   return (
     <section className="border-t border-rule pt-3">
       <h3 className="text-s text-ink-2">{name} of weekly fill rate against this size, live</h3>
-      {(state.status === "running" || state.status === "done") && state.points.length > 1 && (
-        <Curve points={state.points} current={node.size} name={name} />
-      )}
+      {points.length > 1 && <Curve points={points} current={node.size} name={name} />}
       {state.status === "failed" && <ErrorLine>{state.message}</ErrorLine>}
       {(state.status === "idle" || state.status === "failed" || isStale) && (
         <Button size="small" className="mt-2" onClick={() => void draw(parsed, node.size!)}>
@@ -67,7 +54,7 @@ export function SizeCurve({ node }: { node: DraftOf<"buffer"> }) {
       )}
       {state.status === "running" && (
         <p role="status" className="text-s text-ink-3">
-          Running {state.points.length} of {shares.length} sizes
+          Running {points.length} of {shares.length} sizes
         </p>
       )}
     </section>

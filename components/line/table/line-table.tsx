@@ -8,8 +8,9 @@ import { Button } from "@/components/ui/button";
 import { Empty } from "@/components/ui/empty";
 import { ErrorBox } from "@/components/ui/error-box";
 import { useLine } from "@/lib/client/line-state";
-import { formatCount, formatMoney, formatNumber, formatPercent } from "@/lib/format";
+import { formatCount, formatMoney, formatNumber, formatPercent, percentileName } from "@/lib/format";
 import type { DraftNode, DraftOf } from "@/lib/line/types";
+import { percentile } from "@/lib/simulation";
 import type { RunResult } from "@/lib/simulation/types";
 import { useShownResult } from "../canvas/use-shown-result";
 import { readingOf } from "../drawing/node-reading";
@@ -20,7 +21,8 @@ type Group = { caption: string; nodes: DraftOf<"buffer">[] };
 
 /** All nodes of the line at once, with the reading beside each. */
 export function LineTable() {
-  const { document } = useLine();
+  const { document, options } = useLine();
+  const { acceptedRisk } = options;
   const result = useShownResult();
   const [refusals, setRefusals] = useState<readonly string[]>([]);
   const of = <K extends DraftNode["kind"]>(kind: K) =>
@@ -101,10 +103,12 @@ export function LineTable() {
         caption="Customers"
         nodes={of("customer")}
         columns={columnsOf.customer}
-        heads={result ? ["Fill rate, mean", "P10"] : []}
+        heads={result ? ["Fill rate, mean", percentileName(acceptedRisk)] : []}
         readings={({ id }) => {
           const reading = result?.customers[id];
-          return reading ? [formatPercent(reading.mean.value), formatPercent(reading.p10.value)] : [];
+          return result && reading
+            ? [formatPercent(reading.mean.value), formatPercent(percentile(result, acceptedRisk, id).value)]
+            : [];
         }}
         onRefusals={setRefusals}
       />
@@ -139,7 +143,7 @@ function BufferTable({ caption, nodes, result, isLast, onRefusals }: BufferTable
   const { document } = useLine();
   const top = result ? staffTop(...nodes.map(({ id }) => result.buffers[id]?.p90 ?? 0)) : 1;
   const heads = result
-    ? [`On hand, to ${formatCount(top)}`, "P10", "P50", "P90", "Dry, hours", `Capital, ${document.money.currency}`]
+    ? [`On hand, to ${formatCount(top)}`, "P10", "P50", "P90", "Dry, of hours", `Capital, ${document.money.currency}`]
     : [];
   const isPurchased = caption === "Purchased stock";
   const columns = columnsOf.buffer;

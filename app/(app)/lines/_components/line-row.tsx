@@ -1,7 +1,7 @@
 import type { Route } from "next";
 import Link from "next/link";
 import { EmptyGauge } from "@/components/charts/empty-gauge";
-import { FillRateRuler } from "@/components/charts/fill-rate-ruler";
+import { ReadingRuler } from "@/components/charts/reading-ruler";
 import { formatMoneyFigure, formatPercent, formatShare, plural, weeksOf } from "@/lib/format";
 import type { LineSummary, ReadingSummary } from "@/lib/schema/lines";
 import type { Role } from "@/lib/schema/roles";
@@ -51,13 +51,7 @@ function Reading({ reading, from }: { reading: ReadingSummary; from: number }) {
         </span>
         <span className="text-ink-3">{spread}</span>
       </p>
-      <FillRateRuler
-        p05={reading.p05.value}
-        atRisk={reading.atRisk}
-        p50={reading.p50.value}
-        acceptedRisk={reading.acceptedRisk}
-        from={from}
-      />
+      <ReadingRuler reading={reading} from={from} />
       <p className="whitespace-nowrap sm:text-right">
         <span className="text-s text-ink-3">Capital tied up</span>
         <br />

@@ -1,7 +1,7 @@
 "use client";
 
 import { useState } from "react";
-import { rulerStart } from "@/components/charts/fill-rate-ruler";
+import { rulerStartOf } from "@/components/charts/reading-ruler";
 import { Button } from "@/components/ui/button";
 import { Empty } from "@/components/ui/empty";
 import { TextField } from "@/components/ui/text-field";
@@ -17,9 +17,7 @@ export function LinesRegister({ lines, role }: { lines: readonly LineSummary[]; 
   const [isNaming, setNaming] = useState(false);
   const mayEdit = can(role, "edit");
   const found = lines.filter(({ name }) => name.toLowerCase().includes(wanted.trim().toLowerCase()));
-  const from = rulerStart(
-    ...lines.flatMap(({ reading }) => (reading ? [reading.p05.value, reading.atRisk.value] : [])),
-  );
+  const from = rulerStartOf(lines.map(({ reading }) => reading));
   return (
     <>
       <div className="flex flex-wrap items-end gap-x-4 gap-y-3">
