@@ -70,6 +70,7 @@ export function SweepProvider({ children }: { children: ReactNode }) {
       setRun({ ...base, readings });
       for (const [i, size] of sizes.entries()) {
         const sized = withSize(line, bufferId, size);
+        setProgress({ size, share: i / sizes.length });
         const result = await client.run(sized, runOptions, {
           signal: own.signal,
           onProgress: ({ replications, total }) =>

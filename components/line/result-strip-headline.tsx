@@ -2,7 +2,7 @@
 
 import { Progress } from "@/components/ui/progress";
 import { useLine } from "@/lib/client/line-state";
-import { formatPercent } from "@/lib/format";
+import { formatChosenPercent, formatPercent } from "@/lib/format";
 import { engineVersion } from "@/lib/simulation/engine";
 import { describeAbout, idsOf } from "./fault-text";
 import { figuresOf, type StripReading } from "./strip-reading";
@@ -23,7 +23,7 @@ export function ResultStripHeadline({ reading }: { reading: StripReading }) {
 
 function Sentence({ reading: { settled, live, edited } }: { reading: StripReading }) {
   const { scenario, progress, faults, isLiveRunning, options, full } = useLine();
-  const risk = `accepted risk ${formatPercent(options.acceptedRisk, 0)}`;
+  const risk = `accepted risk ${formatChosenPercent(options.acceptedRisk)}`;
   if (progress) return <Running risk={risk} />;
   if (settled) {
     const points = describePoints(settled.atRisk);

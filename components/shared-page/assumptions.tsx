@@ -1,4 +1,4 @@
-import { formatCount, formatNumber, formatPercent } from "@/lib/format";
+import { formatChosenPercent, formatCount, formatNumber } from "@/lib/format";
 import type { SharedVersion } from "@/lib/schema/lines";
 import type { RunResult } from "@/lib/simulation/types";
 
@@ -18,7 +18,7 @@ export function Assumptions({
       ? `Up to ${or(overtime.hoursPerWeek)} hours of overtime in a week after more than ${or(overtime.backlogTrigger)} units are owed.`
       : "No overtime.",
     `Stock costs ${formatNumber((money.carryingRate ?? 0) * 100, 1)}\u202f% of its value a year.`,
-    `Accepted risk ${formatPercent(options.acceptedRisk, 0)}; a week counts as below target under ${formatPercent(options.targetFillRate)}.`,
+    `Accepted risk ${formatChosenPercent(options.acceptedRisk)}; a week counts as below target under ${formatChosenPercent(options.targetFillRate)}.`,
     `${formatCount(options.replications * options.weeks)} simulated weeks: ${formatCount(options.replications)} separate runs of ${formatCount(options.weeks)} weeks, each after ${formatCount(options.warmupWeeks)} weeks of warm-up.`,
     `Demand, lateness, stoppages, scrap and rejects are drawn from the distributions entered for each node; they do not influence one another beyond what the line itself brings about.`,
     "One kind of product passes through; set-up times, staffing and transport between stations are left out.",

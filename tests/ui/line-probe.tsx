@@ -1,0 +1,15 @@
+import { useLayoutEffect } from "react";
+import { type LineState, useLine } from "@/lib/client/line-state";
+
+/** Lets a test read and drive the state of the line: `probe.line` is what was rendered last. */
+export function createProbe() {
+  const probe = { line: null as unknown as LineState };
+  function Probe() {
+    const state = useLine();
+    useLayoutEffect(() => {
+      probe.line = state;
+    });
+    return null;
+  }
+  return { probe, Probe };
+}

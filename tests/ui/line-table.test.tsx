@@ -1,0 +1,121 @@
+import { act, fireEvent, screen, waitFor, within } from "@testing-library/react";
+import userEvent from "@testing-library/user-event";
+import { expect, it, vi } from "vitest";
+import { LineTable } from "@/components/line/table/line-table";
+import type { Role } from "@/lib/schema/roles";
+import { percentile } from "@/lib/simulation";
+import { createDraft, createRoutes, createScenario, exampleDocument, renderLine, serve } from "./line-harness";
+import { createProbe } from "./line-probe";
+
+vi.mock("next/navigation", () => ({
+  usePathname: () => "/lines/l-1/table",
+  useRouter: () => ({ push: vi.fn() }),
+  useSearchParams: () => new URLSearchParams(),
+}));
+
+const { probe, Probe } = createProbe();
+
+function open(role: Role = "engineer", scenario = createScenario()) {
+  serve(createRoutes(role, [scenario]));
+  renderLine({
+    role,
+    scenarios: [scenario],
+    children: (
+      <>
+        <Probe />
+        <LineTable />
+      </>
+    ),
+  });
+}
+const cell = (name: string) => screen.getByLabelText<HTMLInputElement>(name);
+const nodeOf = (id: string) => probe.line.document.nodes.find((node) => node.id === id);
+const nameOf = (id: string) => exampleDocument.nodes.find((node) => node.id === id)?.name;
+const paste = (target: HTMLElement, text: string) =>
+  fireEvent.paste(target, { clipboardData: { getData: () => text } });
+
+it("lists every node of the line in the table of its kind", () => {
+  open();
+  for (const caption of ["Purchased stock", "Between stations", "Finished goods", "Stations", "Suppliers", "Customers"])
+    expect(screen.getByText(caption)).toBeTruthy();
+  const nNames = document.querySelectorAll('[data-cell$=":0"]').length;
+  expect(nNames).toBe(exampleDocument.nodes.length);
+});
+
+it("writes each sound stroke and keeps what cannot be read in the cell", () => {
+  open();
+  const size = cell(`${nameOf("stator")}: Size, units`);
+  fireEvent.change(size, { target: { value: "60" } });
+  expect(nodeOf("stator")).toMatchObject({ size: 60 });
+  fireEvent.change(size, { target: { value: "6o" } });
+  expect(size.value).toBe("6o");
+  expect(size.getAttribute("aria-invalid")).toBe("true");
+  expect(nodeOf("stator")).toMatchObject({ size: 60 });
+  fireEvent.blur(size);
+  expect(size.value).toBe("60");
+  expect(size.title).toBe("was 48");
+});
+
+it("takes a block of cells as one step of undo and lists what it could not use", () => {
+  open();
+  const before = probe.line.document;
+  const first = cell(`${nameOf("wind")}: Cycle, min`);
+  paste(first, "6.5\t0.3\t2\n7,25\tfast\t1");
+  const stations = probe.line.document.nodes.filter(({ kind }) => kind === "station");
+  expect(stations[0]).toMatchObject({ cycleMinutes: 6.5, cycleCv: 0.3, parallel: 2 });
+  expect(stations[1]).toMatchObject({ cycleMinutes: 7.25, parallel: 1 });
+  expect(screen.getByText("1 pasted cell was not used")).toBeTruthy();
+  expect(screen.getByText(/^Row 2, column 2: “fast” is not a number/)).toBeTruthy();
+  act(() => probe.line.undo());
+  expect(probe.line.document).toEqual(before);
+});
+
+it("moves from cell to cell by arrow keys and Enter", async () => {
+  open();
+  const user = userEvent.setup();
+  const cycles = [...document.querySelectorAll<HTMLInputElement>('input[aria-label$=": Cycle, min"]')];
+  await user.click(cycles[0]);
+  await user.keyboard("{ArrowDown}");
+  expect(document.activeElement).toBe(cycles[1]);
+  await user.keyboard("{Enter}");
+  expect(document.activeElement).toBe(cycles[2]);
+  await user.keyboard("{Shift>}{Enter}{/Shift}");
+  expect(document.activeElement).toBe(cycles[1]);
+  await user.keyboard("{ArrowRight}");
+  expect(document.activeElement?.getAttribute("aria-label")).toMatch(/: Variation$/);
+});
+
+it("marks a faulty cell with the sentence of the fault", () => {
+  open();
+  const scrap = cell(`${nameOf("wind")}: Scrap, %`);
+  fireEvent.change(scrap, { target: { value: "100" } });
+  expect(probe.line.faults).toMatchObject([{ node: "wind", path: "scrapRate" }]);
+  expect(scrap.title).toBe(probe.line.faults[0].message);
+});
+
+it("shows readings beside the fields after a run, customers at the accepted risk", async () => {
+  const draft = createDraft();
+  open("engineer", createScenario({ draft: { ...draft, options: { ...draft.options, acceptedRisk: 0.25 } } }));
+  act(() => probe.line.runFull());
+  await waitFor(() => expect(probe.line.full).not.toBeNull());
+  const table = screen.getByText("Customers").closest("table")!;
+  expect(within(table).getByRole("columnheader", { name: "P25" })).toBeTruthy();
+  const { result } = probe.line.full!;
+  const row = within(table).getByDisplayValue(nameOf("cus-a")!).closest("tr")!;
+  expect(row.textContent).toContain((percentile(result, 0.25, "cus-a").value * 100).toFixed(1));
+  expect(screen.getByText("Tied up in all buffers")).toBeTruthy();
+});
+
+it("lets a viewer read and type nothing", () => {
+  open("viewer");
+  expect([...document.querySelectorAll<HTMLInputElement>("[data-cell]")].every(({ readOnly }) => readOnly)).toBe(true);
+  const before = probe.line.document;
+  paste(cell(`${nameOf("wind")}: Cycle, min`), "1\t2");
+  expect(probe.line.document).toBe(before);
+});
+
+it("says how to begin where nothing is drawn", () => {
+  const draft = createDraft({ document: { ...exampleDocument, nodes: [], links: [] } });
+  open("engineer", createScenario({ draft }));
+  expect(screen.getByText("Nothing is drawn yet")).toBeTruthy();
+});
