@@ -50,7 +50,7 @@ it("leads with the sentence of the accepted risk, then money, causes, assumption
   expect(heading).toMatch(/195 of 200 weeks/);
   expect(Math.abs(Number(/([\d.]+)\u202f%/.exec(heading)![1]) - atRisk.value * 100)).toBeLessThan(0.5001);
   expect(screen.getByText(/Accepted risk 2\.5\s%/)).toBeTruthy();
-  expect(screen.getByRole("img", { name: `Drawing of ${document.name}` })).toBeTruthy();
+  expect(screen.getByRole("region", { name: `Drawing of ${document.name}` })).toBeTruthy();
   for (const caution of generalCautions) expect(screen.getByText(caution)).toBeTruthy();
   expect(screen.queryByRole("button", { name: /edit|keep|run/i })).toBeNull();
 });
