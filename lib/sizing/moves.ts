@@ -1,0 +1,127 @@
+import type { Reading } from "./runs";
+import { isBad, rateOf } from "./week-rates";
+
+/** One buffer some steps up or down, as a run over the same weeks shows it. */
+export type Move = {
+  b: number;
+  by: number;
+  /** What the objective falls by; negative where it rises. */
+  gain: number;
+  /** Weeks that turn bad, and bad ones that turn good. */
+  lost: number[];
+  won: number[];
+};
+
+/** Parts of the way to a neighbour at which a buffer may stop. */
+const parts = [1, 2 / 3, 1 / 3];
+
+/**
+ * Moves of one buffer from one set of sizes towards another that differs in this buffer alone: all the way and parts of
+ * it. Where on the way a week turns is read off its two fill rates.
+ */
+export function describeMoves(from: Reading, to: Reading, b: number, targetFillRate: number): Move[] {
+  const way = to.levels[b] - from.levels[b];
+  const turns: { w: number; at: number }[] = [];
+  for (let w = 0; w < from.codes.length; w++) {
+    if (isBad(from.codes[w]) === isBad(to.codes[w]) || from.codes[w] === 0 || to.codes[w] === 0) continue;
+    const [start, end] = [rateOf(from.codes[w], targetFillRate), rateOf(to.codes[w], targetFillRate)];
+    turns.push({ w, at: (targetFillRate - start) / (end - start) });
+  }
+  return [...new Set(parts.map((part) => Math.trunc(way * part)))]
+    .filter((by) => by !== 0)
+    .map((by) => {
+      const part = by / way;
+      const turned = turns.filter(({ at }) => at <= part).map(({ w }) => w);
+      return {
+        b,
+        by,
+        gain: (from.value - to.value) * part,
+        lost: turned.filter((w) => !isBad(from.codes[w])),
+        won: turned.filter((w) => isBad(from.codes[w])),
+      };
+    });
+}
+
+/** Moves of different buffers, and by how many weeks more are bad with them. */
+export type Combination = { moves: Move[]; change: number };
+
+/**
+ * Puts moves of different buffers together so that the objective falls and no more weeks turn bad than there is room for.
+ * @param slack - Further weeks that may turn bad; negative: so many have to turn good first.
+ * @returns Ever longer lists of moves, each a set worth a run.
+ * @remarks Effects are taken as those of the single moves: a week is lost by any one and won by any one.
+ */
+export function combineMoves(moves: readonly Move[], nWeeks: number, slack: number): Combination[] {
+  const chosen: Move[] = [];
+  const sets: Combination[] = [];
+  let change = 0;
+  const tally = createTally(nWeeks);
+  let left = slack;
+  const take = (move: Move) => {
+    const by = tally.change([move]);
+    left -= by;
+    change += by;
+    tally.add(move);
+    chosen.push(move);
+  };
+  const open = () => moves.filter(({ b }) => chosen.every((move) => move.b !== b));
+  while (left < 0) {
+    const helps = open().map((move) => ({ move, change: tally.change([move]) }));
+    const best = pickMost(
+      helps.filter(({ change }) => change < 0),
+      ({ move, change }) => (move.gain >= 0 ? Infinity : change / move.gain),
+    );
+    if (!best) break;
+    take(best.move);
+  }
+  if (chosen.length > 0) sets.push({ moves: [...chosen], change });
+  for (;;) {
+    const options: { moves: Move[]; gain: number }[] = [];
+    const free = open();
+    free.forEach((move, i) => {
+      if (move.gain > 0 && tally.change([move]) <= left) options.push({ moves: [move], gain: move.gain });
+      for (const other of free.slice(i + 1)) {
+        const gain = move.gain + other.gain;
+        if (other.b !== move.b && move.by * other.by < 0 && gain > 0 && tally.change([move, other]) <= left)
+          options.push({ moves: [move, other], gain });
+      }
+    });
+    const best = pickMost(options, ({ gain }) => gain);
+    if (!best) return sets;
+    best.moves.forEach(take);
+    sets.push({ moves: [...chosen], change });
+  }
+}
+
+function pickMost<T>(items: readonly T[], worth: (item: T) => number): T | null {
+  let best: T | null = null;
+  let most = -Infinity;
+  for (const item of items) {
+    const value = worth(item);
+    if (best === null || value > most) [best, most] = [item, value];
+  }
+  return best;
+}
+
+/** How many chosen moves lose and win each week. */
+function createTally(nWeeks: number) {
+  const nLost = new Int16Array(nWeeks);
+  const nWon = new Int16Array(nWeeks);
+  const isLost = (w: number) => nLost[w] > 0;
+  const add = ({ lost, won }: Move, by = 1) => {
+    for (const w of lost) nLost[w] += by;
+    for (const w of won) nWon[w] += by;
+  };
+  /** Bad weeks more (or less) once the moves join those taken. */
+  const change = (moves: readonly Move[]): number => {
+    let n = 0;
+    for (const move of moves) {
+      for (const w of move.lost) if (!isLost(w)) n++;
+      for (const w of move.won) if (nWon[w] === 0) n--;
+      add(move);
+    }
+    for (const move of moves) add(move, -1);
+    return n;
+  };
+  return { add: (move: Move) => add(move), change };
+}
