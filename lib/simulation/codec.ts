@@ -1,8 +1,10 @@
+import { sha256 } from "@noble/hashes/sha2.js";
 import type { Tallies } from "./tallies";
 import type { RunResult } from "./types";
 
 const magic = 0x46_42_52_31;
 const headerBytes = 16;
+const checksumAt = 12;
 
 type View = { kind: "Float32" | "Float64" | "Int32"; length: number };
 type Header = { result: Omit<RunResult, "fillRates" | "tallies">; shape: Tallies["shape"]; views: View[] };
@@ -10,8 +12,8 @@ type Header = { result: Omit<RunResult, "fillRates" | "tallies">; shape: Tallies
 const types = { Float32: Float32Array, Float64: Float64Array, Int32: Int32Array } as const;
 
 /**
- * A whole result as bytes: "FBR1", the lengths of header and body, the figures as JSON, then the arrays in the
- * machine's byte order, each from a multiple of 8.
+ * A whole result as bytes: "FBR1", the lengths of header and body, a checksum of all other bytes, the figures as JSON,
+ * then the arrays in the machine's byte order, each from a multiple of 8.
  * @remarks Figures that are NaN are written as null and come back as NaN.
  */
 export function encodeResult(result: RunResult): Uint8Array<ArrayBuffer> {
@@ -41,12 +43,13 @@ export function encodeResult(result: RunResult): Uint8Array<ArrayBuffer> {
     bytes.set(new Uint8Array(array.buffer, array.byteOffset, array.byteLength), at);
     at += align(array.byteLength);
   }
+  new DataView(bytes.buffer).setUint32(checksumAt, checksumOf(bytes));
   return bytes;
 }
 
 /**
  * Reads what `encodeResult` wrote.
- * @throws RangeError for bytes of another format, cut short, or whose parts contradict one another.
+ * @throws RangeError for bytes of another format, cut short, changed since, or whose parts contradict one another.
  */
 export function decodeResult(bytes: Uint8Array): RunResult {
   const { header, start } = readHeader(bytes);
@@ -94,6 +97,9 @@ function readHeader(bytes: Uint8Array): { header: Header; start: number } {
   const textBytes = view.getUint32(4);
   const start = align(headerBytes + textBytes);
   if (start + view.getUint32(8) !== bytes.length) throw damaged("the length");
+  const checksum = view.getUint32(checksumAt);
+  // Results stored before there was a checksum have 0 in its place.
+  if (checksum !== 0 && checksum !== checksumOf(bytes)) throw damaged("it has changed since it was written");
   let header: unknown;
   try {
     header = JSON.parse(new TextDecoder().decode(bytes.subarray(headerBytes, headerBytes + textBytes)));
@@ -133,6 +139,12 @@ function restoreNaN(value: unknown): unknown {
 
 const kindOf = (array: Float32Array | Float64Array | Int32Array): View["kind"] =>
   array instanceof Float32Array ? "Float32" : array instanceof Float64Array ? "Float64" : "Int32";
+
+/** First word of the SHA-256 of everything but the checksum itself; never 0. */
+function checksumOf(bytes: Uint8Array): number {
+  const hash = sha256.create().update(bytes.subarray(0, checksumAt)).update(bytes.subarray(headerBytes)).digest();
+  return new DataView(hash.buffer, hash.byteOffset).getUint32(0) || 1;
+}
 
 const align = (length: number) => Math.ceil(length / 8) * 8;
 
