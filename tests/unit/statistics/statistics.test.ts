@@ -3,6 +3,7 @@ import { findTruncation } from "@/lib/statistics/mser";
 import { pickCountedQuantile, pickQuantile } from "@/lib/statistics/quantile";
 import { cutSections, sectionHalfWidth } from "@/lib/statistics/sections";
 import { t975 } from "@/lib/statistics/student";
+import { exactOf, nameOf } from "../truth/cases";
 
 describe("pickQuantile", () => {
   it("takes x[floor(n p + 1e-9)], at most the last", () => {
@@ -25,7 +26,21 @@ describe("pickQuantile", () => {
   });
 });
 
+describe("the model's percentile beside the usual ones", () => {
+  const cases = Object.entries(exactOf<Record<string, number[]>>("F07"));
+  it.each(cases)("F07, %s: as far above type 2 as type 1 is below it", (name, [inverse, averaged]) => {
+    // Where n p is whole, type 1 takes the lower neighbour, type 2 the mean of both and the model the upper one.
+    const data = [1, 2, 3, 4, 5, 6, 7, 8, 9, 10];
+    expect(pickQuantile(data, Number(name.slice(1))), nameOf("F07")).toBe(2 * averaged - inverse);
+  });
+});
+
 describe("t975", () => {
+  it("F15: has the digits of the reference", () => {
+    const exact = exactOf<Record<string, number>>("F15");
+    for (const df of [1, 2, 5, 9, 10, 19]) expect(t975(df), nameOf("F15")).toBeCloseTo(exact[`t${df}`], 10);
+  });
+
   it("has the tabulated values", () => {
     // Abramowitz and Stegun (1964), table 26.10.
     expect(t975(1)).toBeCloseTo(12.706, 3);
@@ -49,6 +64,11 @@ describe("sectionHalfWidth", () => {
 });
 
 describe("findTruncation", () => {
+  it("H05: cuts where the hand-checked series does, each value standing for a batch", () => {
+    const series = [0, 4, 7, 9, 10, 11, 9, 10, 10, 11, 9, 10].flatMap((value) => new Array<number>(5).fill(value));
+    expect(findTruncation(series), nameOf("H05")).toEqual({ cut: 5 * exactOf<{ d: number }>("H05").d, isFound: true });
+  });
+
   it("cuts a start that is off, and nothing from a level series", () => {
     const level = Array.from({ length: 100 }, (_, i) => 10 + ((i * 7919) % 13) / 13);
     expect(findTruncation(level)).toMatchObject({ isFound: true });

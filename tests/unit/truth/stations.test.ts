@@ -49,6 +49,23 @@ describe("Bernoulli lines", () => {
     expect(Math.abs(value - exact.WIP1), nameOf(id)).toBeLessThan(2 * (halfWidth ?? 0) + 0.002);
   });
 
+  it("C11: a part held upstream while worked on is not the line of exponential stations", () => {
+    const exact = exactOf<{ K3N2: number; K3N1: number }>("C11");
+    const rate = (p: number, size: number) =>
+      solveSerialLine(
+        [p, p, p].map((up) => bernoulliMachine(up)),
+        [size, size],
+      ).rate / p;
+    // The chain mixes the slower the smaller p is, so that the limit is drawn out from two values.
+    const limit = (size: number) => 2 * rate(0.01, size) - rate(0.02, size);
+    expect(limit(2), nameOf("C11")).toBeCloseTo(exact.K3N2, 4);
+    expect(limit(1)).toBeCloseTo(exact.K3N1, 4);
+    const p = 0.05;
+    const result = simulate(serialLine([bernoulli(p), bernoulli(p), bernoulli(p)], [2, 2]), millionTicks);
+    // Output of a Bernoulli station a tick varies by less than p (1 - p).
+    expect(Math.abs(perTick(result, "m3") - p * rate(p, 2))).toBeLessThan(4 * standardError(p * (1 - p), millionTicks));
+  });
+
   it("A02: idle time of the first is lack of room, of the second lack of parts", () => {
     const exact = exactOf<{ BL1: number; ST2: number }>("A02");
     const { stations } = simulate(serialLine([bernoulli(0.9), bernoulli(0.8)], [3]), millionTicks);
