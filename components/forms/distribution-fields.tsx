@@ -4,7 +4,7 @@ import { useState } from "react";
 import { ErrorLine } from "@/components/ui/error-line";
 import { Pick } from "@/components/ui/pick";
 import { formatCount, formatNumber } from "@/lib/format";
-import { readNumber } from "@/lib/line/clipboard";
+import { explainNumber, readNumber } from "@/lib/line/clipboard";
 import { meanOf, sdOf } from "@/lib/line/distribution-mean";
 import type { DraftDistribution } from "@/lib/line/types";
 import { faultOf } from "./fault-lookup";
@@ -139,7 +139,7 @@ function ObservedValues({ path, unit }: { path: string; unit: string }) {
     const cells = text.split(/[;\s]+/).filter(Boolean);
     const numbers = cells.map((cell) => readNumber(cell));
     const bad = numbers.findIndex((number) => number === null || Number.isNaN(number));
-    setProblem(bad >= 0 ? `“${cells[bad].slice(0, 20)}” is not a number.` : null);
+    setProblem(bad >= 0 ? `${explainNumber(cells[bad])}.` : null);
     if (bad < 0) set(path, numbers);
   }
 

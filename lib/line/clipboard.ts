@@ -26,18 +26,35 @@ export function readCells(text: string): string[][] {
 /**
  * A number as people and spreadsheets write it: decimal point or comma, thousands parted by spaces, points, commas or
  * apostrophes, a percent sign (divides by 100), a leading or typographic minus.
- * @returns Null for an empty cell, NaN for what is no finite number. "1,234" reads as 1234 and "1,5" as 1.5: a single comma
- * before exactly three digits parts thousands, like a single point does only where `isWhole` asks for a count.
+ * @returns Null for an empty cell, NaN for what is no finite number or may be one of two, see `isAmbiguous`. "1,5" is 1.5;
+ * where `isWhole` asks for a count, a single comma or point before exactly three digits parts thousands.
  */
 export function readNumber(text: string, isWhole = false): number | null {
   const plain = text.replace(/[\s\u00a0\u202f'’]/g, "").replace("\u2212", "-");
   if (plain === "") return null;
+  if (isAmbiguous(plain, isWhole)) return NaN;
   const isPercent = plain.endsWith("%");
   const digits = isPercent ? plain.slice(0, -1) : plain;
   const normal = normalise(digits, isWhole);
   const value = /^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i.test(normal) ? Number(normal) : NaN;
   if (!Number.isFinite(value)) return NaN;
   return isPercent ? value / 100 : value;
+}
+
+/**
+ * Whether a comma may part thousands as well as decimals: "1,250" is 1250 to some and 1.25 to others. Counts are whole,
+ * so that there it parts thousands.
+ */
+export function isAmbiguous(text: string, isWhole = false): boolean {
+  return !isWhole && /^[+-\u2212]?[1-9]\d{0,2},\d{3}%?$/.test(text.replace(/\s/g, ""));
+}
+
+/** Why a text is no number that can be used. */
+export function explainNumber(text: string, isWhole = false): string {
+  const shown = `“${text.trim().slice(0, 20)}”`;
+  return isAmbiguous(text, isWhole)
+    ? `${shown} may have a thousands mark or a decimal comma: type it without the one or with a decimal point`
+    : `${shown} is not a number`;
 }
 
 function normalise(digits: string, isWhole: boolean): string {
@@ -52,7 +69,7 @@ function normalise(digits: string, isWhole: boolean): string {
   }
   const mark = lastComma >= 0 ? "," : ".";
   const pieces = digits.split(mark);
-  if (isGrouped(pieces) && (pieces.length > 2 || mark === "," || isWhole)) return pieces.join("");
+  if (isGrouped(pieces) && (pieces.length > 2 || isWhole)) return pieces.join("");
   return digits.replace(",", ".");
 }
 

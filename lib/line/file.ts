@@ -2,9 +2,8 @@ import type { z } from "zod";
 import { AppError } from "@/lib/errors";
 import { DraftLineInput, LayoutInput, NotesInput } from "./draft-schema";
 import { limits, sayCount } from "./limits";
-import { parseLine } from "./parse";
-import { isRecord } from "./parse-fields";
-import type { LineFile } from "./types";
+import { isRecord, shorten } from "./parse-fields";
+import type { DraftLine, LineFile } from "./types";
 
 /**
  * Reads what an export wrote, or a bare line document. Gaps in numbers are fine; the shape has to be that of a line.
@@ -27,15 +26,30 @@ export function readLineFile(json: unknown): LineFile {
       "too-large",
       `The file's line has ${sayCount(line.links.length)} links; the limit is ${sayCount(limits.links)}.`,
     );
-  const parsed = parseLine(line);
-  // A draft may have gaps, but a field that nobody knows would be lost without a word.
-  const unknown = "faults" in parsed ? parsed.faults.filter(({ message }) => message.includes("unknown field")) : [];
-  if (unknown.length > 0) refuse(unknown.map(({ message }) => message));
   return {
-    line: read(DraftLineInput, line, "line"),
+    line: readWhole(line),
     layout: isExport ? read(LayoutInput, json.layout ?? { positions: {} }, "layout") : { positions: {} },
     notes: isExport ? read(NotesInput, json.notes ?? [], "notes") : [],
   };
+}
+
+/** A draft may have gaps, but a field that nobody knows would be lost without a word. */
+function readWhole(line: Record<string, unknown>): DraftLine {
+  const known = read(DraftLineInput, line, "line");
+  const lost = findLost(line, known, "line");
+  return lost.length === 0 ? known : refuse(lost.map((path) => `${path}: unknown field. Take it out.`));
+}
+
+/** Paths of fields that reading has left out. */
+function findLost(before: unknown, after: unknown, path: string): string[] {
+  if (Array.isArray(before))
+    return before.flatMap((item, i) => findLost(item, (after as unknown[])[i], `${path}.${i}`));
+  if (!isRecord(before)) return [];
+  return Object.entries(before).flatMap(([key, value]) =>
+    Object.hasOwn(after as object, key)
+      ? findLost(value, (after as Record<string, unknown>)[key], `${path}.${shorten(key)}`)
+      : [`${path}.${shorten(key)}`],
+  );
 }
 
 function read<T>(schema: z.ZodType<T>, value: unknown, where: string): T {

@@ -5,6 +5,10 @@ export const limits = {
   ticksPerWeek: 20_000,
   /** Counts stay below this. */
   count: 2 ** 30,
+  /** Money of one unit, hour or week; beyond it sums lose their cents. */
+  money: 1e12,
+  /** Carrying cost a year as a share of value. */
+  carryingRate: 100,
   /** replications x (weeks + warm-up weeks). */
   replicationWeeks: 1_000_000,
   documentBytes: 2 * 1024 * 1024,

@@ -90,6 +90,10 @@ export const rule = {
     sentence: `Correlation is a number from ${isSigned ? "more than \u22121" : "0"} to less than 1.`,
   }),
   atLeastZero: (what: string): NumberRule => ({ allows: (v) => v >= 0, sentence: `${what} has to be 0 or more.` }),
+  money: (what: string): NumberRule => ({
+    allows: (v) => v >= 0 && v <= limits.money,
+    sentence: `${what} has to be 0 or more, up to ${sayCount(limits.money)}.`,
+  }),
   aboveZero: (what: string): NumberRule => ({ allows: (v) => v > 0, sentence: `${what} has to be more than 0.` }),
   atLeastOne: (what: string): NumberRule => ({ allows: (v) => v >= 1, sentence: `${what} has to be 1 or more.` }),
   wholeFromOne: (what: string): NumberRule => ({

@@ -43,6 +43,10 @@ const cycleRule: NumberRule = {
   allows: (v) => v >= limits.cycleMinutes,
   sentence: `Cycle in minutes has to be more than 0: at least ${limits.cycleMinutes.toFixed(9)}.`,
 };
+const leadTimeRule: NumberRule = {
+  allows: (v) => v >= 0 && v < limits.count,
+  sentence: `Lead time in working days has to be 0 or more and below ${sayCount(limits.count)}.`,
+};
 const variationRule: NumberRule = {
   allows: (v) => v >= 0 && v <= limits.cycleCv,
   sentence: `Variation of the cycle has to be 0 or more, up to ${sayCount(limits.cycleCv)}.`,
@@ -50,7 +54,7 @@ const variationRule: NumberRule = {
 
 const checkers: Record<NodeKind, (check: Checker, node: Fields, place: Place) => void> = {
   supplier(check, node, place) {
-    check.number(node.leadTimeDays, place, "leadTimeDays", "Lead time", rule.atLeastZero("Lead time in working days"));
+    check.number(node.leadTimeDays, place, "leadTimeDays", "Lead time", leadTimeRule);
     if (node.lateness !== null) checkDistribution(check, node.lateness, place, "lateness", "Lateness");
     check.number(node.onTimeShare, place, "onTimeShare", "The share on time", rule.share("On time"));
     check.number(node.correlation, place, "correlation", "Correlation", rule.correlation(false));
@@ -90,7 +94,7 @@ const checkers: Record<NodeKind, (check: Checker, node: Fields, place: Place) =>
     check.number(node.size, place, "size", "The size", rule.wholeFromOne("Size"));
     if (node.startLevel !== null)
       check.number(node.startLevel, place, "startLevel", "The start level", rule.wholeFromZero("Start level"));
-    check.number(node.unitValue, place, "unitValue", "The value of a unit", rule.atLeastZero("Value of a unit"));
+    check.number(node.unitValue, place, "unitValue", "The value of a unit", rule.money("Value of a unit"));
     if (node.replenishment !== null) checkReplenishment(check, node.replenishment, place);
   },
 
@@ -107,7 +111,7 @@ const checkers: Record<NodeKind, (check: Checker, node: Fields, place: Place) =>
     check.number(node.correlation, place, "correlation", "Correlation", rule.correlation(true));
     check.oneOf(node.callOff, place, "callOff", "Call-off", ["daily", "weekly"]);
     check.oneOf(node.unmet, place, "unmet", "Unmet demand", ["backorder", "lost"]);
-    check.number(node.lateFine, place, "lateFine", "The late fine", rule.atLeastZero("Late fine"));
+    check.number(node.lateFine, place, "lateFine", "The late fine", rule.money("Late fine"));
   },
 };
 

@@ -96,13 +96,10 @@ function checkMoney(check: Checker, value: unknown) {
   if (!check.keys(value, {}, "money", "Money", ["currency", "carryingRate"])) return;
   if (typeof value.currency !== "string" || !/^[A-Z]{3}$/.test(value.currency))
     check.add({}, "money.currency", "The currency is a code of three capital letters (ISO 4217), such as EUR.");
-  check.number(
-    value.carryingRate,
-    {},
-    "money.carryingRate",
-    "The carrying cost",
-    rule.atLeastZero("Carrying cost a year, as a share of value,"),
-  );
+  check.number(value.carryingRate, {}, "money.carryingRate", "The carrying cost", {
+    allows: (v) => v >= 0 && v <= limits.carryingRate,
+    sentence: `Carrying cost a year is a share of value: 0 to ${sayCount(100 * limits.carryingRate)}\u202f%.`,
+  });
 }
 
 function checkOvertime(check: Checker, value: unknown, calendar: unknown) {
@@ -124,7 +121,7 @@ function checkOvertime(check: Checker, value: unknown, calendar: unknown) {
     {},
     "overtime.costPerHour",
     "The cost of an overtime hour",
-    rule.atLeastZero("Cost of an overtime hour"),
+    rule.money("Cost of an overtime hour"),
   );
   const tick = isRecord(calendar) ? calendar.tickMinutes : null;
   if (!isHours || typeof tick !== "number" || !(tick > 0)) return;

@@ -1,4 +1,4 @@
-import { readNumber } from "@/lib/line/clipboard";
+import { explainNumber, readNumber } from "@/lib/line/clipboard";
 import type { DraftNode, NodeKind } from "@/lib/line/types";
 
 /** One column of a table of nodes: a field, how it is typed, and which nodes have it. */
@@ -62,7 +62,7 @@ export function readCell(column: Column, text: string): { value: unknown } | { r
   if (column.isText) return text.trim() ? { value: text.trim() } : { refusal: "a name is missing" };
   const read = readNumber(text, column.isWhole);
   if (read === null) return { value: null };
-  if (Number.isNaN(read)) return { refusal: `“${text.slice(0, 20)}” is not a number` };
+  if (Number.isNaN(read)) return { refusal: explainNumber(text, column.isWhole) };
   return { value: Number((text.includes("%") ? read : read / (column.factor ?? 1)).toPrecision(12)) };
 }
 
