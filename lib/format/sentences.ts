@@ -3,7 +3,7 @@ import { formatPercent } from "./numbers";
 
 /** "9 of 10" for an accepted risk of 10 %; the smallest whole numbers that say it, else of 100 or of 1 000. */
 export function weeksOf(acceptedRisk: number): { reached: number; of: number } {
-  for (const total of [2, 3, 4, 5, 10, 20, 50, 100, 200, 1_000]) {
+  for (const total of [2, 3, 4, 5, 10, 20, 40, 50, 100, 200, 1_000]) {
     const missed = acceptedRisk * total;
     if (Math.round(missed) >= 1 && Math.abs(missed - Math.round(missed)) < 1e-6)
       return { reached: total - Math.round(missed), of: total };
