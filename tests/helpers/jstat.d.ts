@@ -1,4 +1,5 @@
 declare module "jstat" {
-  const jstat: { normal: { cdf(x: number, mean: number, sd: number): number } };
+  type Continuous = { cdf(x: number, a: number, b: number): number; inv(p: number, a: number, b: number): number };
+  const jstat: { normal: Continuous; gamma: Continuous };
   export default jstat;
 }
