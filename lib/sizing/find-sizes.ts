@@ -1,5 +1,6 @@
 import type { RunResult } from "@/lib/simulation/types";
 import { composeSizes } from "./compose";
+import { enumerateSets, isSmall } from "./enumerate";
 import { improveSizes, isBetter } from "./improve";
 import { measureNeeds, type Needs } from "./needs";
 import { checkProblem, type Evaluate, type Levels, sizesOf, type SizingProblem, topLevels } from "./problem";
@@ -31,7 +32,9 @@ export type SearchProgress = {
 /** Screening looks at this part of the replications, but at no fewer than `fewest`. */
 const screened = 1 / 4;
 const fewest = 20;
-const mostRounds = 4;
+/** Runs of all replications spent on looking round for one accepted risk, and on mending a set that was not confirmed. */
+const mostEffort = 40;
+const mendingEffort = 15;
 /** Sets put to the unseen weeks at most for one accepted risk. */
 const mostConfirmed = 3;
 
@@ -45,7 +48,7 @@ const mostConfirmed = 3;
  * @throws RangeError on a problem that cannot be searched.
  * @remarks Sample average approximation on common random numbers (A. J. Kleywegt, A. Shapiro and T. Homem-de-Mello,
  * SIAM Journal on Optimization 12 (2002) 479-502): weekly needs of each buffer, marginal analysis over them
- * (`composeSizes`), neighbourhood search (`improveSizes`). A set that fails on unseen weeks is searched again at a risk
+ * (`composeSizes`), neighbourhood search (`improveSizes`); few sets are run through one by one. A set that fails on unseen weeks is searched again at a risk
  * lower by what it was off, so that the unseen weeks are looked at up to three times.
  */
 export async function findSizes(
@@ -55,46 +58,54 @@ export async function findSizes(
   { signal, resume }: { signal?: AbortSignal; resume?: Checkpoint } = {},
 ): Promise<{ frontier: FrontierPoint[]; evaluations: number }> {
   checkProblem(problem);
-  const frontier: FrontierPoint[] = [];
-  let best: SearchProgress["best"] = null;
-  const report = () =>
-    onProgress?.({ evaluations: runs.evaluations(), best, frontier: [...frontier], checkpoint: runs.checkpoint() });
-  const runs: Runs = createRuns(problem, evaluate, report, signal, resume);
   const { replications, seed } = problem;
   const whole: Sample = { seed, replications, firstReplication: 0 };
-  const unseen: Sample = { seed: `${seed}/unseen`, replications, firstReplication: 0 };
+  const unseen: Sample = { ...whole, seed: `${seed}/unseen` };
   const part: Sample = {
-    seed,
-    firstReplication: 0,
+    ...whole,
     replications: Math.min(replications, Math.max(fewest, Math.ceil(replications * screened))),
   };
+  const frontier: FrontierPoint[] = [];
+  let acceptedRisk = problem.acceptedRisks[0];
+  const whollyRead: Reading[] = [];
+  const describeBest = (): SearchProgress["best"] => {
+    const sound = whollyRead.filter(({ risk }) => risk <= acceptedRisk);
+    if (sound.length === 0) return null;
+    const { levels, risk, value } = sound.reduce((best, other) => (other.value < best.value ? other : best));
+    return { acceptedRisk, sizes: sizesOf(problem, levels), risk, value };
+  };
+  const report = () =>
+    onProgress?.({
+      evaluations: runs.evaluations(),
+      best: describeBest(),
+      frontier: [...frontier],
+      checkpoint: runs.checkpoint(),
+    });
+  const runs: Runs = createRuns(
+    problem,
+    evaluate,
+    (readings, sample) => {
+      if (sample.seed === seed && sample.replications === replications) whollyRead.push(...readings);
+      report();
+    },
+    signal,
+    resume,
+  );
 
   const [ample] = await runs.read([topLevels(problem)], whole);
   const needs = await measureNeeds(problem, runs, part);
-  for (const acceptedRisk of problem.acceptedRisks) {
-    best = null;
-    const noteBest = (reading: Reading) => {
-      if (reading.risk <= acceptedRisk && (best === null || reading.value < best.value))
-        best = { acceptedRisk, sizes: sizesOf(problem, reading.levels), risk: reading.risk, value: reading.value };
-      return reading;
-    };
+  for (acceptedRisk of problem.acceptedRisks) {
     let accepted = Math.max(acceptedRisk, ample.risk);
-    let found = noteBest(
-      await improveSizes(
-        problem,
-        runs,
-        needs,
-        await startAt(problem, runs, needs, whole, accepted),
-        accepted,
-        mostRounds,
-      ),
-    );
+    const start = isSmall(problem)
+      ? await enumerateSets(problem, runs, part, whole, accepted)
+      : await composeStart(problem, runs, needs, whole, accepted);
+    let found = await improveSizes(problem, runs, needs, start, accepted, mostEffort);
     let confirmed = await runs.resultOf(found.levels, unseen);
     for (let i = 1; i < mostConfirmed && !reaches(confirmed, acceptedRisk) && ample.risk < acceptedRisk; i++) {
       accepted = Math.max(ample.risk, found.risk - (confirmed.summary.risk.value - acceptedRisk) - 1e-9);
-      const next = await improveSizes(problem, runs, needs, found, accepted, 2);
+      const next = await improveSizes(problem, runs, needs, found, accepted, mendingEffort);
       if (next.levels === found.levels) break;
-      found = noteBest(next);
+      found = next;
       confirmed = await runs.resultOf(found.levels, unseen);
     }
     frontier.push({
@@ -112,7 +123,7 @@ export async function findSizes(
 const reaches = (result: RunResult, acceptedRisk: number): boolean => result.summary.risk.value <= acceptedRisk;
 
 /** The cheapest of the sets composed from the weeks' needs that keeps to the accepted risk, over all weeks. */
-async function startAt(
+async function composeStart(
   problem: SizingProblem,
   runs: Runs,
   needs: Needs,

@@ -1,4 +1,4 @@
-import { combineMoves, describeMoves, type Move } from "./moves";
+import { combineMoves, type Combination, describeMoves, type Move } from "./moves";
 import { withLevel, type Needs } from "./needs";
 import type { Levels, SizingProblem } from "./problem";
 import type { Reading, Runs, Sample } from "./runs";
@@ -8,12 +8,16 @@ import { countDue } from "./week-rates";
 const firstStep = 0.08;
 /** Times that sets are composed anew after one look round. */
 const mostTries = 3;
+/** Single moves run in full where joint ones do not help. */
+const mostSingle = 4;
+/** A set this close to the accepted risk leaves nothing worth another try; share of weeks. */
+const enough = 0.002;
 
 /**
  * Looks round a set of sizes and moves to a better one while there is one: each buffer a step down and a step up over a
  * part of the weeks, the most promising moves together over all of them.
  * @param accepted - Share of weeks that may be bad.
- * @param mostRounds - Looks round.
+ * @param mostEffort - Runs of all replications after which no further look round is begun.
  * @returns The cheapest set found that keeps to the accepted risk; where none does, the one of the least risk.
  * @remarks Neighbourhood search on a fixed sample of weeks, as in H. Wang, R. Pasupathy and B. W. Schmeiser,
  * Integer-ordered simulation optimization using R-SPLINE, ACM TOMACS 23 (2013) 17.
@@ -24,7 +28,7 @@ export async function improveSizes(
   { byBuffer, sample: part }: Needs,
   start: Reading,
   accepted: number,
-  mostRounds: number,
+  mostEffort: number,
 ): Promise<Reading> {
   const whole: Sample = { seed: problem.seed, replications: problem.replications, firstReplication: 0 };
   let best = start;
@@ -34,7 +38,8 @@ export async function improveSizes(
   const steps = problem.buffers.map(({ min, step }, b) =>
     Math.max(1, Math.round((firstStep * (min + start.levels[b] * step)) / step)),
   );
-  for (let round = 0; round < mostRounds; round++) {
+  const end = runs.effort() + mostEffort;
+  for (let round = 0; runs.effort() < end; round++) {
     const [from, ...moved] = await runs.read(
       [
         best.levels,
@@ -51,16 +56,21 @@ export async function improveSizes(
       return describeMoves(from, to, b, problem.targetFillRate);
     });
     const next = await tryMoves(runs, moves, best, from, accepted, whole);
-    if (next !== best) best = next;
-    else if (steps.every((step) => step === 1)) break;
-    else steps.forEach((step, b) => (steps[b] = Math.max(1, Math.floor(step / 2))));
+    const hasMoved = steps.map((step, b) => Math.abs(next.levels[b] - best.levels[b]) >= step);
+    if (next === best && steps.every((step) => step === 1)) break;
+    // Where a whole step was right, the next one may be longer; where nothing helped, all are too long.
+    steps.forEach((step, b) => {
+      if (next === best) steps[b] = Math.max(1, step >> 1);
+      else if (hasMoved[b]) steps[b] = 2 * step;
+    });
+    best = next;
   }
   return best;
 }
 
 /**
  * Runs sets composed of moves over all weeks. What they turn out worse than the moves alone promised is allowed for in
- * the next ones.
+ * the next ones; where joint moves do not help, the best single ones are tried.
  */
 async function tryMoves(
   runs: Runs,
@@ -71,23 +81,21 @@ async function tryMoves(
   whole: Sample,
 ): Promise<Reading> {
   const nDue = countDue(from.codes);
+  const setOf = ({ moves: set }: Combination): Levels =>
+    set.reduce<Levels>((levels, { b, by }) => withLevel(levels, b, levels[b] + by), best.levels);
   let next = best;
   let overshoot = 0;
   for (let i = 0; i < mostTries; i++) {
     const slack = Math.floor((accepted - best.risk - overshoot) * nDue + 1e-6);
-    const sets = combineMoves(moves, from.codes.length, slack);
-    const asked = [sets[sets.length - 1], sets[sets.length >> 1]].filter((set) => set !== undefined);
-    if (asked.length === 0) break;
-    const tried = await runs.read(
-      asked.map(({ moves: set }) =>
-        set.reduce<Levels>((levels, { b, by }) => withLevel(levels, b, levels[b] + by), best.levels),
-      ),
-      whole,
-    );
+    const { joint, single } = combineMoves(moves, from.codes.length, slack);
+    const isLast = i === mostTries - 1 || joint.length === 0;
+    const asked = isLast && next === best ? single.slice(0, mostSingle) : [joint.at(-1), joint[joint.length >> 1]];
+    const sets = asked.filter((set) => set !== undefined);
+    if (sets.length === 0) break;
+    const tried = await runs.read(sets.map(setOf), whole);
     next = tried.reduce((one, other) => (isBetter(other, one, accepted) ? other : one), next);
-    const more = tried[0].risk - best.risk - asked[0].change / nDue;
-    if (tried[0].risk <= accepted && tried[0].risk > accepted - 0.002) break;
-    overshoot = more;
+    if (isLast || (tried[0].risk <= accepted && tried[0].risk > accepted - enough)) break;
+    overshoot = tried[0].risk - best.risk - sets[0].change / nDue;
   }
   return next;
 }

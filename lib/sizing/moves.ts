@@ -48,49 +48,65 @@ export type Combination = { moves: Move[]; change: number };
 /**
  * Puts moves of different buffers together so that the objective falls and no more weeks turn bad than there is room for.
  * @param slack - Further weeks that may turn bad; negative: so many have to turn good first.
- * @returns Ever longer lists of moves, each a set worth a run.
+ * @returns `joint`: ever longer lists of moves; `single`: the best moves and pairs of moves on their own, best first.
  * @remarks Effects are taken as those of the single moves: a week is lost by any one and won by any one.
  */
-export function combineMoves(moves: readonly Move[], nWeeks: number, slack: number): Combination[] {
+export function combineMoves(
+  moves: readonly Move[],
+  nWeeks: number,
+  slack: number,
+): { joint: Combination[]; single: Combination[] } {
   const chosen: Move[] = [];
-  const sets: Combination[] = [];
-  let change = 0;
+  const joint: Combination[] = [];
   const tally = createTally(nWeeks);
-  let left = slack;
+  let change = 0;
   const take = (move: Move) => {
-    const by = tally.change([move]);
-    left -= by;
-    change += by;
+    change += tally.change([move]);
     tally.add(move);
     chosen.push(move);
   };
   const open = () => moves.filter(({ b }) => chosen.every((move) => move.b !== b));
-  while (left < 0) {
-    const helps = open().map((move) => ({ move, change: tally.change([move]) }));
+  while (change > slack) {
+    const helps = open().map((move) => ({ move, by: tally.change([move]) }));
     const best = pickMost(
-      helps.filter(({ change }) => change < 0),
-      ({ move, change }) => (move.gain >= 0 ? Infinity : change / move.gain),
+      helps.filter(({ by }) => by < 0),
+      ({ move, by }) => (move.gain >= 0 ? Infinity : by / move.gain),
     );
     if (!best) break;
     take(best.move);
   }
-  if (chosen.length > 0) sets.push({ moves: [...chosen], change });
+  if (chosen.length > 0) joint.push({ moves: [...chosen], change });
+  const mended = [...chosen];
+  const mendedChange = change;
+  let single: Combination[] | null = null;
   for (;;) {
-    const options: { moves: Move[]; gain: number }[] = [];
-    const free = open();
-    free.forEach((move, i) => {
-      if (move.gain > 0 && tally.change([move]) <= left) options.push({ moves: [move], gain: move.gain });
-      for (const other of free.slice(i + 1)) {
-        const gain = move.gain + other.gain;
-        if (other.b !== move.b && move.by * other.by < 0 && gain > 0 && tally.change([move, other]) <= left)
-          options.push({ moves: [move, other], gain });
-      }
-    });
+    const options = listOptions(open(), tally, slack - change);
+    single ??= options
+      .sort((one, other) => other.gain - one.gain)
+      .map((option) => ({ moves: [...mended, ...option.moves], change: mendedChange + option.change }));
     const best = pickMost(options, ({ gain }) => gain);
-    if (!best) return sets;
+    if (!best) return { joint, single };
     best.moves.forEach(take);
-    sets.push({ moves: [...chosen], change });
+    joint.push({ moves: [...chosen], change });
   }
+}
+
+type Option = Combination & { gain: number };
+
+/** Moves, and pairs of one up and one down, that lower the objective and lose no more weeks than are left. */
+function listOptions(free: readonly Move[], tally: ReturnType<typeof createTally>, left: number): Option[] {
+  const options: Option[] = [];
+  const offer = (moves: Move[]) => {
+    const gain = moves.reduce((sum, move) => sum + move.gain, 0);
+    if (!(gain > 0)) return;
+    const change = tally.change(moves);
+    if (change <= left) options.push({ moves, change, gain });
+  };
+  free.forEach((move, i) => {
+    offer([move]);
+    for (const other of free.slice(i + 1)) if (other.b !== move.b && move.by * other.by < 0) offer([move, other]);
+  });
+  return options;
 }
 
 function pickMost<T>(items: readonly T[], worth: (item: T) => number): T | null {

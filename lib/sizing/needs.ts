@@ -109,7 +109,9 @@ function readNeed(
       if (!isBad(rungs[i].codes[w])) continue;
       const [low, high] = [rungs[i], rungs[i + 1]];
       const below = rateOf(low.codes[w], targetFillRate);
-      const above = rateOf(high.codes[w], targetFillRate);
+      const reached = rateOf(high.codes[w], targetFillRate);
+      // What a week that shipped everything had to spare is unknown: as much as the other lacked.
+      const above = reached >= 1 ? 2 * targetFillRate - below : reached;
       const part = (targetFillRate - below) / Math.max(1e-9, above - below);
       const gap = high.levels[b] - low.levels[b];
       levels[w] = low.levels[b] + Math.min(gap, Math.max(1, Math.ceil(part * gap)));

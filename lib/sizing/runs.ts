@@ -29,17 +29,19 @@ export type Runs = {
   /** The whole result of one set; runs it again where only its reading is known. */
   resultOf(levels: Levels, sample: Sample): Promise<RunResult>;
   evaluations(): number;
+  /** Runs asked for so far, known ones among them, in runs of all replications. */
+  effort(): number;
   checkpoint(): Checkpoint;
 };
 
 /**
- * @param onBatch - Told after each batch of runs.
+ * @param onBatch - Told of the readings of each batch of runs.
  * @throws RangeError where the checkpoint is of another problem.
  */
 export function createRuns(
   problem: SizingProblem,
   evaluate: Evaluate,
-  onBatch: () => void,
+  onBatch: (readings: readonly Reading[], sample: Sample) => void,
   signal?: AbortSignal,
   resume?: Checkpoint,
 ): Runs {
@@ -50,6 +52,7 @@ export function createRuns(
   const readings = new Map<string, Reading>();
   const results = new Map<string, RunResult>();
   let nEvaluations = 0;
+  let effort = 0;
 
   async function run(sets: readonly Levels[], sample: Sample): Promise<void> {
     if (sets.length === 0) return;
@@ -69,7 +72,10 @@ export function createRuns(
       stored[key] = { value, risk, codes: toBase64(codes), lows };
       if (sample.replications === problem.replications) results.set(key, found[i]);
     });
-    onBatch();
+    onBatch(
+      sets.map((levels) => readings.get(keyOf(levels, sample))!),
+      sample,
+    );
   }
 
   function recall(levels: Levels, sample: Sample): Reading | null {
@@ -85,6 +91,8 @@ export function createRuns(
 
   return {
     async read(sets, sample) {
+      // Known readings count, so that a resumed search ends where the first would have.
+      effort += (sets.length * sample.replications) / problem.replications;
       const missing = new Map(sets.filter((set) => !recall(set, sample)).map((set) => [keyOf(set, sample), set]));
       await run([...missing.values()], sample);
       return sets.map((set) => recall(set, sample)!);
@@ -95,6 +103,7 @@ export function createRuns(
       return results.get(key)!;
     },
     evaluations: () => nEvaluations,
+    effort: () => effort,
     checkpoint: () => ({ format: "forebay.sizing/1", problem: name, readings: { ...stored } }),
   };
 }
