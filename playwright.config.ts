@@ -9,7 +9,7 @@ export default defineConfig({
   workers: 1,
   // The machine may be busy: these are limits, not expectations.
   timeout: 180_000,
-  expect: { timeout: 20_000 },
+  expect: { timeout: 45_000 },
   reporter: process.env.PLAYWRIGHT_JSON_OUTPUT_NAME ? [["list"], ["json"]] : [["list"]],
   use: {
     baseURL: address,
