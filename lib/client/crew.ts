@@ -22,8 +22,8 @@ type Slot = {
   busy: { job: Job; since: number; giveUp(error: Error): void } | null;
 };
 
-/** A worker that has not taken a line by then is not coming. */
-const startLimitMs = 20_000;
+/** A worker that has not taken a line by then is not coming; another is started once. */
+const defaultStartLimitMs = 6_000;
 /** A cancelled block older than this is taken for hung. */
 const cancelLimitMs = 1_000;
 /** A block may take this many times what was expected of it, and never less than `leastLimitMs`, before it is given up. */
@@ -31,7 +31,14 @@ const patience = 50;
 const leastLimitMs = 20_000;
 
 /** Hands the calls of all jobs to a fixed number of workers, started when first needed and replaced when they fail. */
-export function createCrew(nWorkers: number, startWorker: () => WorkerHandle, now: () => number) {
+export function createCrew(
+  nWorkers: number,
+  startWorker: () => WorkerHandle,
+  now: () => number,
+  startLimitMs = defaultStartLimitMs,
+) {
+  /** Calls whose worker did not start: each is given to another one, once. */
+  const again: { job: Job; call: Call }[] = [];
   const slots = Array.from({ length: nWorkers }, (): Slot => ({ worker: null, loaded: null, busy: null }));
   const jobs: Job[] = [];
 
@@ -45,6 +52,11 @@ export function createCrew(nWorkers: number, startWorker: () => WorkerHandle, no
   function handOut(): void {
     for (const slot of slots) {
       if (slot.busy) continue;
+      const waiting = again.shift();
+      if (waiting) {
+        void serve(slot, waiting.job, waiting.call, true);
+        continue;
+      }
       for (const job of [...jobs]) {
         const call = jobs.includes(job) ? job.next() : null;
         if (!call) continue;
@@ -54,7 +66,7 @@ export function createCrew(nWorkers: number, startWorker: () => WorkerHandle, no
     }
   }
 
-  async function serve(slot: Slot, job: Job, call: Call): Promise<void> {
+  async function serve(slot: Slot, job: Job, call: Call, isAgain = false): Promise<void> {
     const task = { job, since: now(), giveUp: (_error: Error): void => undefined };
     const given = new Promise<never>((_, reject) => (task.giveUp = reject));
     slot.busy = task;
@@ -68,7 +80,9 @@ export function createCrew(nWorkers: number, startWorker: () => WorkerHandle, no
     } catch (error) {
       if (slot.busy !== task) return;
       dismiss(slot);
-      if (jobs.includes(job)) job.fail(describeFailure(error));
+      if (!jobs.includes(job)) return;
+      if (error instanceof NotStarted && !isAgain) again.push({ job, call });
+      else job.fail(describeFailure(error));
     } finally {
       handOut();
     }
@@ -78,11 +92,11 @@ export function createCrew(nWorkers: number, startWorker: () => WorkerHandle, no
     const worker = (slot.worker ??= startWorker());
     worker.onFailure((message) => giveUp(new Error(message)));
     if (slot.loaded !== job) {
-      await within(startLimitMs, worker.api.load(call.line), "it did not start");
+      await within(startLimitMs, worker.api.load(call.line), () => new NotStarted("it did not start"));
       slot.loaded = job;
     }
     const limit = call.expectedMs === null ? Infinity : Math.max(leastLimitMs, patience * call.expectedMs);
-    return within(limit, call.send(worker.api), "it stopped answering");
+    return within(limit, call.send(worker.api), () => new Error("it stopped answering"));
   }
 
   return {
@@ -95,6 +109,7 @@ export function createCrew(nWorkers: number, startWorker: () => WorkerHandle, no
     drop(job: Job): void {
       const at = jobs.indexOf(job);
       if (at >= 0) jobs.splice(at, 1);
+      for (let i = again.length - 1; i >= 0; i--) if (again[i].job === job) again.splice(i, 1);
       for (const slot of slots) {
         const task = slot.busy;
         if (task?.job !== job) continue;
@@ -112,18 +127,21 @@ export function createCrew(nWorkers: number, startWorker: () => WorkerHandle, no
     close(): void {
       for (const slot of slots) dismiss(slot);
       jobs.length = 0;
+      again.length = 0;
     },
   };
 }
 
 export type Crew = ReturnType<typeof createCrew>;
 
+class NotStarted extends Error {}
+
 /** Waits once more after the limit, since a machine that slept wakes with all its timers due. */
-function within<T>(limitMs: number, work: Promise<T>, message: string): Promise<T> {
+function within<T>(limitMs: number, work: Promise<T>, late: () => Error): Promise<T> {
   if (limitMs === Infinity) return work;
   return new Promise((resolve, reject) => {
     let timer = setTimeout(() => {
-      timer = setTimeout(() => reject(new Error(message)), limitMs);
+      timer = setTimeout(() => reject(late()), limitMs);
     }, limitMs);
     work.then(resolve, reject).finally(() => clearTimeout(timer));
   });

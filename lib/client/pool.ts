@@ -8,7 +8,7 @@ import { createCrew, type Call, type Job } from "./crew";
 import type { LowestLevels, RunHooks, SimulationClient } from "./simulation-client";
 import { startBrowserWorker, type WorkerHandle } from "./worker-handle";
 
-export type PoolSettings = { nWorkers?: number; startWorker?(): WorkerHandle; now?(): number };
+export type PoolSettings = { nWorkers?: number; startWorker?(): WorkerHandle; now?(): number; startLimitMs?: number };
 
 /** Shares of a run after which what is finished is merged for show. Each merge costs about one block. */
 const partialAt = [0.1, 0.3, 0.55, 0.8];
@@ -22,7 +22,7 @@ const mostWorkers = 8;
 export function createSimulationClient(settings: PoolSettings = {}): SimulationClient {
   const nWorkers = settings.nWorkers ?? Math.max(1, Math.min(navigator.hardwareConcurrency || 1, mostWorkers));
   const now = settings.now ?? (() => performance.now());
-  const crew = createCrew(nWorkers, settings.startWorker ?? startBrowserWorker, now);
+  const crew = createCrew(nWorkers, settings.startWorker ?? startBrowserWorker, now, settings.startLimitMs);
   const pending = new Set<(error: Error) => void>();
 
   function start<T>(

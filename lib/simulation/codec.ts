@@ -57,7 +57,7 @@ export function decodeResult(bytes: Uint8Array): RunResult {
   const arrays = header.views.map(({ kind, length }) => {
     const type = types[kind];
     const byteLength = length * type.BYTES_PER_ELEMENT;
-    if (!type || !Number.isInteger(length) || length < 0 || at + byteLength > bytes.length) throw damaged("an array");
+    if (at + byteLength > bytes.length) throw damaged("an array");
     const array = new type(bytes.slice(at, at + byteLength).buffer);
     at += align(byteLength);
     return array;
@@ -110,18 +110,27 @@ function readHeader(bytes: Uint8Array): { header: Header; start: number } {
   return { header, start };
 }
 
+const isObject = (value: unknown): value is object => typeof value === "object" && value !== null;
+
+function isView(value: unknown): value is View {
+  if (!isObject(value)) return false;
+  const { kind, length } = value as Partial<View>;
+  return kind !== undefined && Object.hasOwn(types, kind) && Number.isInteger(length) && (length ?? -1) >= 0;
+}
+
 function isHeader(value: unknown): value is Header {
-  if (typeof value !== "object" || value === null) return false;
+  if (!isObject(value)) return false;
   const { result, shape, views } = value as Partial<Header>;
   return (
     Array.isArray(views) &&
     views.length >= 6 &&
-    typeof result === "object" &&
-    typeof result?.options === "object" &&
-    typeof result.summary === "object" &&
+    views.every(isView) &&
+    isObject(result) &&
+    isObject(result.options) &&
+    isObject(result.summary) &&
     typeof result.engine === "string" &&
-    typeof shape === "object" &&
-    Array.isArray(shape?.customers) &&
+    isObject(shape) &&
+    Array.isArray(shape.customers) &&
     Array.isArray(shape.buffers) &&
     Array.isArray(shape.stations) &&
     Array.isArray(shape.suppliers)

@@ -1,5 +1,12 @@
 import "@testing-library/jest-dom/vitest";
 import { cleanup } from "@testing-library/react";
-import { afterEach } from "vitest";
+import { afterEach, vi } from "vitest";
+import { address } from "./navigation";
 
-afterEach(cleanup);
+vi.mock("next/navigation", () => import("./navigation"));
+
+afterEach(() => {
+  cleanup();
+  address.search = "";
+  address.push.mockReset();
+});

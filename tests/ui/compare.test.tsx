@@ -1,5 +1,5 @@
 import { act, fireEvent, screen, waitFor, within } from "@testing-library/react";
-import { expect, it, vi } from "vitest";
+import { expect, it } from "vitest";
 import { SizeComparison } from "@/components/compare/size-comparison";
 import { SweepProvider } from "@/components/compare/sweep-store";
 import { ShareActionsContext } from "@/components/share/share-actions";
@@ -22,12 +22,6 @@ import {
   smallOptions,
 } from "./line-harness";
 import { createProbe } from "./line-probe";
-
-vi.mock("next/navigation", () => ({
-  usePathname: () => "/lines/l-1/compare",
-  useRouter: () => ({ push: vi.fn() }),
-  useSearchParams: () => new URLSearchParams(),
-}));
 
 const { probe, Probe } = createProbe();
 const options = { ...smallOptions, replications: 8, weeks: 10 };

@@ -1,18 +1,12 @@
 import { act, fireEvent, screen, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
-import { beforeEach, expect, it, vi } from "vitest";
+import { beforeEach, expect, it } from "vitest";
 import { InspectorPanel } from "@/components/line/inspector/inspector-panel";
 import { linkKey } from "@/lib/line/edits";
 import type { DraftNode, NodeKind } from "@/lib/line/types";
 import type { Role } from "@/lib/schema/roles";
 import { createRoutes, createScenario, renderLine, serve } from "./line-harness";
 import { createProbe } from "./line-probe";
-
-vi.mock("next/navigation", () => ({
-  usePathname: () => "/lines/l-1/sketch",
-  useRouter: () => ({ push: vi.fn() }),
-  useSearchParams: () => new URLSearchParams(),
-}));
 
 const { probe, Probe } = createProbe();
 

@@ -1,11 +1,12 @@
 import { act, screen, waitFor } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { useLayoutEffect } from "react";
-import { beforeEach, describe, expect, it, vi } from "vitest";
+import { describe, expect, it } from "vitest";
 import { useLine, type LineState } from "@/lib/client/line-state";
 import type { Edit } from "@/lib/line/edits";
 import { encodeResult, simulate } from "@/lib/simulation";
 import type { Line } from "@/lib/line/types";
+import { address } from "@/tests/helpers/navigation";
 import {
   createActions,
   createClient,
@@ -17,13 +18,6 @@ import {
   serve,
   smallOptions,
 } from "./line-harness";
-
-const address = vi.hoisted(() => ({ search: "", push: vi.fn() }));
-vi.mock("next/navigation", () => ({
-  usePathname: () => "/lines/l-1/sketch",
-  useRouter: () => ({ push: address.push }),
-  useSearchParams: () => new URLSearchParams(address.search),
-}));
 
 let line: LineState;
 function Probe() {
@@ -44,11 +38,6 @@ const rename = (name: string): Edit => ({
   apply: (state) => ({ ...state, document: { ...state.document, name } }),
 });
 const pause = (ms: number) => act(() => new Promise((resolve) => setTimeout(resolve, ms)));
-
-beforeEach(() => {
-  address.search = "";
-  address.push.mockReset();
-});
 
 describe("LineProvider", () => {
   it("reads the document: faults, digest, what is not kept", async () => {

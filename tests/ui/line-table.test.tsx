@@ -1,17 +1,11 @@
 import { act, fireEvent, screen, waitFor, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
-import { expect, it, vi } from "vitest";
+import { expect, it } from "vitest";
 import { LineTable } from "@/components/line/table/line-table";
 import type { Role } from "@/lib/schema/roles";
 import { percentile } from "@/lib/simulation";
 import { createDraft, createRoutes, createScenario, exampleDocument, renderLine, serve } from "./line-harness";
 import { createProbe } from "./line-probe";
-
-vi.mock("next/navigation", () => ({
-  usePathname: () => "/lines/l-1/table",
-  useRouter: () => ({ push: vi.fn() }),
-  useSearchParams: () => new URLSearchParams(),
-}));
 
 const { probe, Probe } = createProbe();
 

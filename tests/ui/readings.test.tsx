@@ -1,6 +1,6 @@
 import { act, fireEvent, screen, waitFor, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
-import { expect, it, vi } from "vitest";
+import { expect, it } from "vitest";
 import { ReadingsView } from "@/components/readings/readings-view";
 import type { RunHooks, SimulationClient } from "@/lib/client/simulation-client";
 import { setField } from "@/lib/line/edits";
@@ -19,12 +19,6 @@ import {
   smallOptions,
 } from "./line-harness";
 import { createProbe } from "./line-probe";
-
-vi.mock("next/navigation", () => ({
-  usePathname: () => "/lines/l-1/readings",
-  useRouter: () => ({ push: vi.fn() }),
-  useSearchParams: () => new URLSearchParams(),
-}));
 
 const { probe, Probe } = createProbe();
 const options = { ...smallOptions, replications: 40, weeks: 10 };

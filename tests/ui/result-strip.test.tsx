@@ -1,7 +1,7 @@
 import { act, screen, waitFor, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { useLayoutEffect } from "react";
-import { describe, expect, it, vi } from "vitest";
+import { describe, expect, it } from "vitest";
 import { ResultStrip } from "@/components/line/result-strip";
 import { useLine, type LineState } from "@/lib/client/line-state";
 import { simulate, type RunOptions } from "@/lib/simulation";
@@ -15,12 +15,6 @@ import {
   serve,
   smallOptions,
 } from "./line-harness";
-
-vi.mock("next/navigation", () => ({
-  usePathname: () => "/lines/l-1/sketch",
-  useRouter: () => ({ push: vi.fn() }),
-  useSearchParams: () => new URLSearchParams(),
-}));
 
 let line: LineState;
 function Probe() {

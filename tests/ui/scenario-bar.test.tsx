@@ -1,7 +1,7 @@
 import { act, screen, waitFor, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { useLayoutEffect } from "react";
-import { describe, expect, it, vi } from "vitest";
+import { describe, expect, it } from "vitest";
 import { BarSlots, BarTools } from "@/components/line/bar-slot";
 import { ScenarioBar } from "@/components/line/scenario-bar";
 import { StaleDialog } from "@/components/line/stale-dialog";
@@ -17,12 +17,6 @@ import {
   renderLine,
   serve,
 } from "./line-harness";
-
-vi.mock("next/navigation", () => ({
-  usePathname: () => "/lines/l-1/sketch",
-  useRouter: () => ({ push: vi.fn() }),
-  useSearchParams: () => new URLSearchParams(),
-}));
 
 let line: LineState;
 function Probe() {

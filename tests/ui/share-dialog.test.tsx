@@ -7,12 +7,6 @@ import type { ReadingSummary, ShareSummary } from "@/lib/schema/lines";
 import { createActions, createRoutes, createScenario, renderLine, type Route, serve } from "./line-harness";
 import { createProbe } from "./line-probe";
 
-vi.mock("next/navigation", () => ({
-  usePathname: () => "/lines/l-1/readings",
-  useRouter: () => ({ push: vi.fn() }),
-  useSearchParams: () => new URLSearchParams(),
-}));
-
 const { probe, Probe } = createProbe();
 const share = (changed: Partial<ShareSummary>): ShareSummary =>
   ({

@@ -1,19 +1,13 @@
 import { act, fireEvent, screen, waitFor, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { useLayoutEffect } from "react";
-import { describe, expect, it, vi } from "vitest";
+import { describe, expect, it } from "vitest";
 import { BarSlots } from "@/components/line/bar-slot";
 import { SheetCanvas } from "@/components/line/canvas/sheet-canvas";
 import { ScenarioBar } from "@/components/line/scenario-bar";
 import { useLine, type LineState } from "@/lib/client/line-state";
 import type { Role } from "@/lib/schema/roles";
 import { createRoutes, createScenario, exampleDocument, renderLine, serve } from "./line-harness";
-
-vi.mock("next/navigation", () => ({
-  usePathname: () => "/lines/l-1/sketch",
-  useRouter: () => ({ push: vi.fn() }),
-  useSearchParams: () => new URLSearchParams(),
-}));
 
 let line: LineState;
 function Probe() {

@@ -159,6 +159,21 @@ describe("createSimulationClient", () => {
     expect(await client.run(line, options)).toEqual(simulate(line, options));
   });
 
+  it("starts another worker for one that never takes its line, and gives up the second time", async () => {
+    let nDead = 1;
+    const crew = createFakeCrew((api, nth) => (nth < nDead ? { ...api, load: never } : api));
+    const settings = { nWorkers: 1, startWorker: crew.startWorker, startLimitMs: 20 };
+    const client = createSimulationClient(settings);
+    open.push(client);
+    expect(await client.run(line, options)).toEqual(simulate(line, options));
+    expect([crew.nStarted, crew.nStopped]).toEqual([2, 1]);
+    nDead = Infinity;
+    const other = createSimulationClient(settings);
+    open.push(other);
+    await expect(other.run(line, options)).rejects.toThrow(/worker of this page failed: it did not start/);
+    expect([crew.nStarted, crew.nStopped]).toEqual([4, 3]);
+  });
+
   it("ends the run when a worker cannot be started at all", async () => {
     const client = createSimulationClient({
       nWorkers: 2,

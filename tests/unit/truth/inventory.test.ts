@@ -38,6 +38,8 @@ function stock({ size, lead, demand, replenishment, more, unmet = "backorder" }:
 /** Within twice the 95 % half-width, about four standard errors, and the little that is given beside it. */
 function near({ value, halfWidth }: Figure, exact: number, beside = 0): void {
   expect(halfWidth).not.toBeNull();
+  // The interval is the product's own: one that came out wide would let anything pass.
+  expect(halfWidth!).toBeLessThan(0.04 * Math.max(Math.abs(exact), 0.5));
   expect(Math.abs(value - exact)).toBeLessThan(2 * halfWidth! + beside);
 }
 
@@ -130,6 +132,14 @@ describe("reorder point with lots", () => {
     near(result.summary.backlog, exact.avgBackorderEnd);
     near(result.buffers.store.mean, exact.avgOnHandEnd);
     near(result.suppliers.s.ordersPerWeek, exact.orderFreq, 1e-4);
+    // A period without demand is in full where the two before it left anything owed or not: the position after an
+    // order is even over 7..16, and the lead time's demand is Poisson 4.
+    const even = Array.from({ length: 10 }, (_, i) => 7 + i);
+    const inFull = (periods: number) =>
+      even.reduce((sum, size) => sum + mean(sumLaw(poissonLaw(2), periods), (units) => (units <= size ? 0.1 : 0)), 0);
+    expect(inFull(3)).toBeCloseTo(exact.periodService, 8);
+    const idle = Math.exp(-2);
+    near(result.summary.weeksInFull, (inFull(3) - idle * inFull(2)) / (1 - idle));
     const fillRate = shareOfUnits(result);
     expect(fillRate, nameOf("E13")).toBeCloseTo(exact.fillRate, 2);
     expect(fillRate).toBeGreaterThan((exact.fillRate + exact.fill_strict) / 2);
