@@ -34,7 +34,7 @@ const screened = 1 / 4;
 const fewest = 20;
 /** Runs of all replications spent on looking round for one accepted risk, and on mending a set that was not confirmed. */
 const mostEffort = 40;
-const mendingEffort = 15;
+const mendingEffort = 25;
 /** Sets put to the unseen weeks at most for one accepted risk. */
 const mostConfirmed = 3;
 

@@ -7,9 +7,11 @@ import { countDue } from "./week-rates";
 /** Part of its size by which a buffer is moved at first. */
 const firstStep = 0.08;
 /** Times that sets are composed anew after one look round. */
-const mostTries = 3;
+const mostTries = 4;
 /** Single moves run in full where joint ones do not help. */
-const mostSingle = 4;
+const mostSingle = 3;
+/** Parts of the weeks over which moves that seem not to help are looked at before they are made shorter. */
+const mostJoined = 2;
 /** A set this close to the accepted risk leaves nothing worth another try; share of weeks. */
 const enough = 0.002;
 
@@ -34,70 +36,107 @@ export async function improveSizes(
   let best = start;
   // Each look round is at other weeks, so that none of them is fitted to for long.
   const nParts = Math.floor(problem.replications / part.replications);
-  const look = (round: number): Sample => ({ ...part, firstReplication: ((round + 1) % nParts) * part.replications });
+  const partOf = (round: number): Sample => ({
+    ...part,
+    firstReplication: ((round + 1) % nParts) * part.replications,
+  });
   const steps = problem.buffers.map(({ min, step }, b) =>
     Math.max(1, Math.round((firstStep * (min + start.levels[b] * step)) / step)),
   );
   const end = runs.effort() + mostEffort;
+  let seen: Look | null = null;
   for (let round = 0; runs.effort() < end; round++) {
-    const [from, ...moved] = await runs.read(
-      [
-        best.levels,
-        ...neighbours(
-          best.levels,
-          steps,
-          byBuffer.map(({ top }) => top),
-        ),
-      ],
-      look(round),
-    );
-    const moves = moved.flatMap((to) => {
-      const b = to.levels.findIndex((level, i) => level !== from.levels[i]);
-      return describeMoves(from, to, b, problem.targetFillRate);
-    });
-    const next = await tryMoves(runs, moves, best, from, accepted, whole);
-    const hasMoved = steps.map((step, b) => Math.abs(next.levels[b] - best.levels[b]) >= step);
-    if (next === best && steps.every((step) => step === 1)) break;
-    // Where a whole step was right, the next one may be longer; where nothing helped, all are too long.
-    steps.forEach((step, b) => {
-      if (next === best) steps[b] = Math.max(1, step >> 1);
-      else if (hasMoved[b]) steps[b] = 2 * step;
-    });
-    best = next;
+    const look = await lookRound(problem, runs, byBuffer, best.levels, steps, partOf(round));
+    seen = seen ? joinLooks(seen, look) : look;
+    const next = await tryMoves(runs, seen, best, accepted, whole);
+    if (next !== best) {
+      // Where a whole step was right, the next one may be longer.
+      steps.forEach((step, b) => {
+        if (Math.abs(next.levels[b] - best.levels[b]) >= step) steps[b] = 2 * step;
+      });
+      best = next;
+    } else if (seen.nParts < Math.min(nParts, mostJoined)) continue;
+    else if (steps.every((step) => step === 1)) break;
+    else steps.forEach((step, b) => (steps[b] = Math.max(1, step >> 1)));
+    seen = null;
   }
   return best;
 }
 
+/** Moves of each buffer, as runs over one or several parts of the weeks show them. */
+type Look = { moves: Move[]; nParts: number; nWeeks: number; nDue: number };
+
+async function lookRound(
+  problem: SizingProblem,
+  runs: Runs,
+  needs: Needs["byBuffer"],
+  levels: Levels,
+  steps: readonly number[],
+  part: Sample,
+): Promise<Look> {
+  const tops = needs.map(({ top }) => top);
+  const [from, ...moved] = await runs.read([levels, ...neighbours(levels, steps, tops)], part);
+  const moves = moved.flatMap((to) => {
+    const b = to.levels.findIndex((level, i) => level !== from.levels[i]);
+    return describeMoves(from, to, b, problem.targetFillRate);
+  });
+  return { moves, nParts: 1, nWeeks: from.codes.length, nDue: countDue(from.codes) };
+}
+
+/** Looks at the same moves from the same sizes over different weeks. */
+function joinLooks(one: Look, other: Look): Look {
+  const moves = one.moves.map((move, i): Move => {
+    const { gain, lost, won } = other.moves[i];
+    const later = (weeks: number[]) => weeks.map((w) => w + one.nWeeks);
+    return {
+      ...move,
+      gain: (one.nParts * move.gain + other.nParts * gain) / (one.nParts + other.nParts),
+      lost: [...move.lost, ...later(lost)],
+      won: [...move.won, ...later(won)],
+    };
+  });
+  return {
+    moves,
+    nParts: one.nParts + other.nParts,
+    nWeeks: one.nWeeks + other.nWeeks,
+    nDue: one.nDue + other.nDue,
+  };
+}
+
 /**
  * Runs sets composed of moves over all weeks. What they turn out worse than the moves alone promised is allowed for in
- * the next ones; where joint moves do not help, the best single ones are tried.
+ * the next ones, by halving the bracket; where joint moves do not help, the best single ones are tried.
  */
 async function tryMoves(
   runs: Runs,
-  moves: readonly Move[],
+  { moves, nWeeks, nDue }: Look,
   best: Reading,
-  from: Reading,
   accepted: number,
   whole: Sample,
 ): Promise<Reading> {
-  const nDue = countDue(from.codes);
   const setOf = ({ moves: set }: Combination): Levels =>
     set.reduce<Levels>((levels, { b, by }) => withLevel(levels, b, levels[b] + by), best.levels);
   let next = best;
-  let overshoot = 0;
+  let allowance = 0;
+  // Allowances with which a set came out too risky, and within the risk.
+  let [tooLittle, plenty] = [-Infinity, Infinity];
   for (let i = 0; i < mostTries; i++) {
-    const slack = Math.floor((accepted - best.risk - overshoot) * nDue + 1e-6);
-    const { joint, single } = combineMoves(moves, from.codes.length, slack);
-    const isLast = i === mostTries - 1 || joint.length === 0;
-    const asked = isLast && next === best ? single.slice(0, mostSingle) : [joint.at(-1), joint[joint.length >> 1]];
-    const sets = asked.filter((set) => set !== undefined);
-    if (sets.length === 0) break;
-    const tried = await runs.read(sets.map(setOf), whole);
-    next = tried.reduce((one, other) => (isBetter(other, one, accepted) ? other : one), next);
-    if (isLast || (tried[0].risk <= accepted && tried[0].risk > accepted - enough)) break;
-    overshoot = tried[0].risk - best.risk - sets[0].change / nDue;
+    const { joint } = combineMoves(moves, nWeeks, Math.floor((accepted - best.risk - allowance) * nDue + 1e-6));
+    const set = joint.at(-1);
+    if (!set) break;
+    const [tried] = await runs.read([setOf(set)], whole);
+    if (isBetter(tried, next, accepted)) next = tried;
+    const off = tried.risk - best.risk - set.change / nDue;
+    if (tried.risk > accepted) tooLittle = Math.max(tooLittle, allowance);
+    else if (tried.risk > accepted - enough) break;
+    else plenty = Math.min(plenty, allowance);
+    const isBracketed = tooLittle > -Infinity && plenty < Infinity;
+    allowance = isBracketed ? (tooLittle + plenty) / 2 : off === allowance ? 1.5 * off : off;
   }
-  return next;
+  if (next !== best) return next;
+  const { single } = combineMoves(moves, nWeeks, Math.floor((accepted - best.risk) * nDue + 1e-6));
+  const tried = await runs.read(single.slice(0, mostSingle).map(setOf), whole);
+  return tried.reduce((one, other) => (isBetter(other, one, accepted) ? other : one), next);
 }
 
 /** Keeping to the accepted risk comes first, then the objective. */
