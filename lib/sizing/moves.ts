@@ -66,29 +66,43 @@ export function combineMoves(
     chosen.push(move);
   };
   const open = () => moves.filter(({ b }) => chosen.every((move) => move.b !== b));
-  while (change > slack) {
-    const helps = open().map((move) => ({ move, by: tally.change([move]) }));
-    const best = pickMost(
-      helps.filter(({ by }) => by < 0),
-      ({ move, by }) => (move.gain >= 0 ? Infinity : by / move.gain),
-    );
-    if (!best) break;
-    take(best.move);
-  }
+  const single = listOptions(moves, tally, slack).sort((one, other) => other.gain - one.gain);
+  balance(moves, tally, slack).forEach(take);
   if (chosen.length > 0) joint.push({ moves: [...chosen], change });
-  const mended = [...chosen];
-  const mendedChange = change;
-  let single: Combination[] | null = null;
+  // What balancing leaves of the room, since moves are not endlessly small.
   for (;;) {
-    const options = listOptions(open(), tally, slack - change);
-    single ??= options
-      .sort((one, other) => other.gain - one.gain)
-      .map((option) => ({ moves: [...mended, ...option.moves], change: mendedChange + option.change }));
-    const best = pickMost(options, ({ gain }) => gain);
+    const best = pickMost(listOptions(open(), tally, slack - change), ({ gain }) => gain);
     if (!best) return { joint, single };
     best.moves.forEach(take);
     joint.push({ moves: [...chosen], change });
   }
+}
+
+/**
+ * The move of each buffer, or none, that is worth most when a lost week has a price; the lowest price at which all of
+ * them together lose no more weeks than there is room for.
+ * @remarks A Lagrange multiplier for the room: H. Everett, Operations Research 11 (1963) 399-417.
+ */
+function balance(moves: readonly Move[], tally: ReturnType<typeof createTally>, slack: number): Move[] {
+  const buffers = [...new Set(moves.map(({ b }) => b))].map((b) => moves.filter((move) => move.b === b));
+  const worthOf = (move: Move, price: number) => move.gain - price * (move.lost.length - move.won.length);
+  const choose = (price: number): Move[] =>
+    buffers.flatMap((own) => {
+      const best = pickMost(own, (move) => worthOf(move, price));
+      return best && worthOf(best, price) > 0 ? [best] : [];
+    });
+  const fits = (set: readonly Move[]) => tally.change(set) <= slack;
+  const free = choose(0);
+  if (fits(free)) return free;
+  let low = 0;
+  let high = Math.max(1e-9, ...moves.map(({ gain }) => Math.abs(gain)));
+  if (!fits(choose(high))) return slack < 0 ? choose(high) : [];
+  for (let i = 0; i < 40; i++) {
+    const price = (low + high) / 2;
+    if (fits(choose(price))) high = price;
+    else low = price;
+  }
+  return choose(high);
 }
 
 type Option = Combination & { gain: number };

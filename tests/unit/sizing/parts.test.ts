@@ -102,10 +102,15 @@ describe("moves", () => {
     expect(single[0].moves.map(({ b }) => b)).toEqual([0, 2]);
   });
 
-  it("mend first where too many weeks are bad, at the least cost for each week", () => {
+  it("mend where too many weeks are bad, at the least cost", () => {
     const moves = [move(0, 1, -30, [], [1, 2]), move(1, 1, -5, [], [2, 3]), move(2, -1, 40, [4])];
-    const { joint } = combineMoves(moves, 5, -2);
-    expect(joint[0].moves.map(({ b }) => b)).toEqual([1]);
-    expect(joint.every(({ change }) => change <= -2)).toBe(true);
+    const gainOf = (most: number) => {
+      const { joint } = combineMoves(moves, 5, most);
+      expect(joint.every(({ change }) => change <= most)).toBe(true);
+      return joint[0].moves.reduce((sum, { gain }) => sum + gain, 0);
+    };
+    expect(gainOf(-1)).toBe(35);
+    expect(gainOf(-2)).toBe(5);
+    expect(gainOf(-3)).toBe(-35);
   });
 });
