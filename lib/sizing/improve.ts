@@ -34,6 +34,7 @@ export async function improveSizes(
 ): Promise<Reading> {
   const whole: Sample = { seed: problem.seed, replications: problem.replications, firstReplication: 0 };
   let best = start;
+  let at = start;
   // Each look round is at other weeks, so that none of them is fitted to for long.
   const nParts = Math.floor(problem.replications / part.replications);
   const partOf = (round: number): Sample => ({
@@ -46,21 +47,36 @@ export async function improveSizes(
   const end = runs.effort() + mostEffort;
   let seen: Look | null = null;
   for (let round = 0; runs.effort() < end; round++) {
-    const look = await lookRound(problem, runs, byBuffer, best.levels, steps, partOf(round));
+    const look = await lookRound(problem, runs, byBuffer, at.levels, steps, partOf(round));
     seen = seen ? joinLooks(seen, look) : look;
-    const next = await tryMoves(runs, seen, best, accepted, whole);
-    if (next !== best) {
+    const { tried, price } = await tryMoves(runs, seen, at, accepted, whole);
+    best = tried.reduce((one, other) => (isBetter(other, one, accepted) ? other : one), best);
+    const next = pickBase([at, ...tried], accepted, price * seen.nDue);
+    if (next !== at) {
       // Where a whole step was right, the next one may be longer.
       steps.forEach((step, b) => {
-        if (Math.abs(next.levels[b] - best.levels[b]) >= step) steps[b] = 2 * step;
+        if (Math.abs(next.levels[b] - at.levels[b]) >= step) steps[b] = 2 * step;
       });
-      best = next;
+      at = next;
     } else if (seen.nParts < Math.min(nParts, mostJoined)) continue;
+    else if (at !== best) at = best;
     else if (steps.every((step) => step === 1)) break;
     else steps.forEach((step, b) => (steps[b] = Math.max(1, step >> 1)));
     seen = null;
   }
   return best;
+}
+
+/**
+ * The set to look round next: the one of the least objective, where risk beyond the accepted one is priced somewhat above
+ * what it costs to mend. A set a little too risky is often a better place to go on from than a dear one within the risk.
+ * @param price - Of a share of weeks, in the objective; 0: unknown.
+ */
+function pickBase(sets: readonly Reading[], accepted: number, price: number): Reading {
+  const merit = ({ value, risk }: Reading) => value + 1.5 * price * Math.max(0, risk - accepted);
+  return sets.reduce((one, other) =>
+    price > 0 ? (merit(other) < merit(one) ? other : one) : isBetter(other, one, accepted) ? other : one,
+  );
 }
 
 /** Moves of each buffer, as runs over one or several parts of the weeks show them. */
@@ -110,33 +126,34 @@ function joinLooks(one: Look, other: Look): Look {
 async function tryMoves(
   runs: Runs,
   { moves, nWeeks, nDue }: Look,
-  best: Reading,
+  base: Reading,
   accepted: number,
   whole: Sample,
-): Promise<Reading> {
+): Promise<{ tried: Reading[]; price: number }> {
   const setOf = ({ moves: set }: Combination): Levels =>
-    set.reduce<Levels>((levels, { b, by }) => withLevel(levels, b, levels[b] + by), best.levels);
-  let next = best;
+    set.reduce<Levels>((levels, { b, by }) => withLevel(levels, b, levels[b] + by), base.levels);
+  const combine = (allowance: number) =>
+    combineMoves(moves, nWeeks, Math.floor((accepted - base.risk - allowance) * nDue + 1e-6));
+  const tried: Reading[] = [];
+  const { single, price } = combine(0);
   let allowance = 0;
   // Allowances with which a set came out too risky, and within the risk.
   let [tooLittle, plenty] = [-Infinity, Infinity];
   for (let i = 0; i < mostTries; i++) {
-    const { joint } = combineMoves(moves, nWeeks, Math.floor((accepted - best.risk - allowance) * nDue + 1e-6));
-    const set = joint.at(-1);
+    const set = combine(allowance).joint.at(-1);
     if (!set) break;
-    const [tried] = await runs.read([setOf(set)], whole);
-    if (isBetter(tried, next, accepted)) next = tried;
-    const off = tried.risk - best.risk - set.change / nDue;
-    if (tried.risk > accepted) tooLittle = Math.max(tooLittle, allowance);
-    else if (tried.risk > accepted - enough) break;
+    const [reading] = await runs.read([setOf(set)], whole);
+    tried.push(reading);
+    const off = reading.risk - base.risk - set.change / nDue;
+    if (reading.risk > accepted) tooLittle = Math.max(tooLittle, allowance);
+    else if (reading.risk > accepted - enough) break;
     else plenty = Math.min(plenty, allowance);
     const isBracketed = tooLittle > -Infinity && plenty < Infinity;
     allowance = isBracketed ? (tooLittle + plenty) / 2 : off === allowance ? 1.5 * off : off;
   }
-  if (next !== best) return next;
-  const { single } = combineMoves(moves, nWeeks, Math.floor((accepted - best.risk) * nDue + 1e-6));
-  const tried = await runs.read(single.slice(0, mostSingle).map(setOf), whole);
-  return tried.reduce((one, other) => (isBetter(other, one, accepted) ? other : one), next);
+  if (tried.some((reading) => isBetter(reading, base, accepted))) return { tried, price };
+  tried.push(...(await runs.read(single.slice(0, mostSingle).map(setOf), whole)));
+  return { tried, price };
 }
 
 /** Keeping to the accepted risk comes first, then the objective. */

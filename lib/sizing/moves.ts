@@ -48,14 +48,15 @@ export type Combination = { moves: Move[]; change: number };
 /**
  * Puts moves of different buffers together so that the objective falls and no more weeks turn bad than there is room for.
  * @param slack - Further weeks that may turn bad; negative: so many have to turn good first.
- * @returns `joint`: ever longer lists of moves; `single`: the best moves and pairs of moves on their own, best first.
+ * @returns `joint`: ever longer lists of moves; `single`: the best moves and pairs of moves on their own, best first;
+ * `price`: what a lost week is worth at the balance.
  * @remarks Effects are taken as those of the single moves: a week is lost by any one and won by any one.
  */
 export function combineMoves(
   moves: readonly Move[],
   nWeeks: number,
   slack: number,
-): { joint: Combination[]; single: Combination[] } {
+): { joint: Combination[]; single: Combination[]; price: number } {
   const chosen: Move[] = [];
   const joint: Combination[] = [];
   const tally = createTally(nWeeks);
@@ -67,12 +68,13 @@ export function combineMoves(
   };
   const open = () => moves.filter(({ b }) => chosen.every((move) => move.b !== b));
   const single = listOptions(moves, tally, slack).sort((one, other) => other.gain - one.gain);
-  balance(moves, tally, slack).forEach(take);
+  const { set, price } = balance(moves, tally, slack);
+  set.forEach(take);
   if (chosen.length > 0) joint.push({ moves: [...chosen], change });
   // What balancing leaves of the room, since moves are not endlessly small.
   for (;;) {
     const best = pickMost(listOptions(open(), tally, slack - change), ({ gain }) => gain);
-    if (!best) return { joint, single };
+    if (!best) return { joint, single, price };
     best.moves.forEach(take);
     joint.push({ moves: [...chosen], change });
   }
@@ -83,7 +85,11 @@ export function combineMoves(
  * them together lose no more weeks than there is room for.
  * @remarks A Lagrange multiplier for the room: H. Everett, Operations Research 11 (1963) 399-417.
  */
-function balance(moves: readonly Move[], tally: ReturnType<typeof createTally>, slack: number): Move[] {
+function balance(
+  moves: readonly Move[],
+  tally: ReturnType<typeof createTally>,
+  slack: number,
+): { set: Move[]; price: number } {
   const buffers = [...new Set(moves.map(({ b }) => b))].map((b) => moves.filter((move) => move.b === b));
   const worthOf = (move: Move, price: number) => move.gain - price * (move.lost.length - move.won.length);
   const choose = (price: number): Move[] =>
@@ -93,16 +99,16 @@ function balance(moves: readonly Move[], tally: ReturnType<typeof createTally>, 
     });
   const fits = (set: readonly Move[]) => tally.change(set) <= slack;
   const free = choose(0);
-  if (fits(free)) return free;
+  if (fits(free)) return { set: free, price: 0 };
   let low = 0;
   let high = Math.max(1e-9, ...moves.map(({ gain }) => Math.abs(gain)));
-  if (!fits(choose(high))) return slack < 0 ? choose(high) : [];
+  if (!fits(choose(high))) return { set: slack < 0 ? choose(high) : [], price: high };
   for (let i = 0; i < 40; i++) {
     const price = (low + high) / 2;
     if (fits(choose(price))) high = price;
     else low = price;
   }
-  return choose(high);
+  return { set: choose(high), price: high };
 }
 
 type Option = Combination & { gain: number };
