@@ -4,7 +4,7 @@ import { enumerateSets, isSmall } from "./enumerate";
 import { improveSizes, isBetter } from "./improve";
 import { measureNeeds, type Needs } from "./needs";
 import { checkProblem, type Evaluate, type Levels, sizesOf, type SizingProblem, topLevels } from "./problem";
-import { type Checkpoint, createRuns, type Reading, type Runs, type Sample } from "./runs";
+import { type Checkpoint, createRuns, type Reading, type Runs, type Sample, type Search } from "./runs";
 import { countBad, countDue } from "./week-rates";
 
 /** The set of sizes found for one accepted risk. */
@@ -48,8 +48,9 @@ const mostConfirmed = 3;
  * @throws RangeError on a problem that cannot be searched.
  * @remarks Sample average approximation on common random numbers (A. J. Kleywegt, A. Shapiro and T. Homem-de-Mello,
  * SIAM Journal on Optimization 12 (2002) 479-502): weekly needs of each buffer, marginal analysis over them
- * (`composeSizes`), neighbourhood search (`improveSizes`); few sets are run through one by one. A set that fails on unseen weeks is searched again at a risk
- * lower by what it was off, so that the unseen weeks are looked at up to three times.
+ * (`composeSizes`), neighbourhood search (`improveSizes`); few sets are run through one by one. A set that fails on
+ * unseen weeks is searched again at a risk lower by what it was off, so that the unseen weeks are looked at up to three
+ * times.
  */
 export async function findSizes(
   problem: SizingProblem,
@@ -67,9 +68,8 @@ export async function findSizes(
   };
   const frontier: FrontierPoint[] = [];
   let acceptedRisk = problem.acceptedRisks[0];
-  const whollyRead: Reading[] = [];
   const describeBest = (): SearchProgress["best"] => {
-    const sound = whollyRead.filter(({ risk }) => risk <= acceptedRisk);
+    const sound = runs.known(whole).filter(({ risk }) => risk <= acceptedRisk);
     if (sound.length === 0) return null;
     const { levels, risk, value } = sound.reduce((best, other) => (other.value < best.value ? other : best));
     return { acceptedRisk, sizes: sizesOf(problem, levels), risk, value };
@@ -81,29 +81,19 @@ export async function findSizes(
       frontier: [...frontier],
       checkpoint: runs.checkpoint(),
     });
-  const runs: Runs = createRuns(
-    problem,
-    evaluate,
-    (readings, sample) => {
-      if (sample.seed === seed && sample.replications === replications) whollyRead.push(...readings);
-      report();
-    },
-    signal,
-    resume,
-  );
+  const runs: Runs = createRuns(problem, evaluate, report, signal, resume);
+  const search: Search = { problem, runs, tops: topLevels(problem), whole, part };
 
-  const [ample] = await runs.read([topLevels(problem)], whole);
-  const needs = await measureNeeds(problem, runs, part);
+  const [ample] = await runs.read([search.tops], whole);
+  const needs = isSmall(search) ? null : await measureNeeds(search);
   for (acceptedRisk of problem.acceptedRisks) {
     let accepted = Math.max(acceptedRisk, ample.risk);
-    const start = isSmall(problem)
-      ? await enumerateSets(problem, runs, part, whole, accepted)
-      : await composeStart(problem, runs, needs, whole, accepted);
-    let found = await improveSizes(problem, runs, needs, start, accepted, mostEffort);
+    const start = needs ? await composeStart(search, needs, accepted) : await enumerateSets(search, accepted);
+    let found = await improveSizes(search, start, accepted, mostEffort);
     let confirmed = await runs.resultOf(found.levels, unseen);
     for (let i = 1; i < mostConfirmed && !reaches(confirmed, acceptedRisk) && ample.risk < acceptedRisk; i++) {
       accepted = Math.max(ample.risk, found.risk - (confirmed.summary.risk.value - acceptedRisk) - 1e-9);
-      const next = await improveSizes(problem, runs, needs, found, accepted, mendingEffort);
+      const next = await improveSizes(search, found, accepted, mendingEffort);
       if (next.levels === found.levels) break;
       found = next;
       confirmed = await runs.resultOf(found.levels, unseen);
@@ -123,13 +113,7 @@ export async function findSizes(
 const reaches = (result: RunResult, acceptedRisk: number): boolean => result.summary.risk.value <= acceptedRisk;
 
 /** The cheapest of the sets composed from the weeks' needs that keeps to the accepted risk, over all weeks. */
-async function composeStart(
-  problem: SizingProblem,
-  runs: Runs,
-  needs: Needs,
-  whole: Sample,
-  accepted: number,
-): Promise<Reading> {
+async function composeStart({ runs, whole }: Search, needs: Needs, accepted: number): Promise<Reading> {
   const nDue = countDue(needs.ample.codes);
   const most = Math.max(0, Math.floor(accepted * nDue) - countBad(needs.ample.codes));
   const compose = (share: number): Levels => composeSizes(needs, Math.floor(share * most));

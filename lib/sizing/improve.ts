@@ -1,7 +1,6 @@
 import { combineMoves, type Combination, describeMoves, type Move } from "./moves";
-import { withLevel, type Needs } from "./needs";
-import type { Levels, SizingProblem } from "./problem";
-import type { Reading, Runs, Sample } from "./runs";
+import { type Levels, withLevel } from "./problem";
+import type { Reading, Sample, Search } from "./runs";
 import { countDue } from "./week-rates";
 
 /** Part of its size by which a buffer is moved at first. */
@@ -25,15 +24,14 @@ const enough = 0.002;
  * Integer-ordered simulation optimization using R-SPLINE, ACM TOMACS 23 (2013) 17.
  */
 export async function improveSizes(
-  problem: SizingProblem,
-  runs: Runs,
-  { byBuffer, sample: part }: Needs,
+  search: Search,
   start: Reading,
   accepted: number,
   mostEffort: number,
 ): Promise<Reading> {
-  const whole: Sample = { seed: problem.seed, replications: problem.replications, firstReplication: 0 };
-  let best = start;
+  const { problem, runs, whole, part } = search;
+  const findBest = () =>
+    runs.known(whole).reduce((one, other) => (isBetter(other, one, accepted) ? other : one), start);
   let at = start;
   // Each look round is at other weeks, so that none of them is fitted to for long.
   const nParts = Math.floor(problem.replications / part.replications);
@@ -47,10 +45,10 @@ export async function improveSizes(
   const end = runs.effort() + mostEffort;
   let seen: Look | null = null;
   for (let round = 0; runs.effort() < end; round++) {
-    const look = await lookRound(problem, runs, byBuffer, at.levels, steps, partOf(round));
+    const look = await lookRound(search, at.levels, steps, partOf(round));
     seen = seen ? joinLooks(seen, look) : look;
-    const { tried, price } = await tryMoves(runs, seen, at, accepted, whole);
-    best = tried.reduce((one, other) => (isBetter(other, one, accepted) ? other : one), best);
+    const { tried, price } = await tryMoves(search, seen, at, accepted);
+    const best = findBest();
     const next = pickBase([at, ...tried], accepted, price * seen.nDue);
     if (next !== at) {
       // Where a whole step was right, the next one may be longer.
@@ -64,7 +62,7 @@ export async function improveSizes(
     else steps.forEach((step, b) => (steps[b] = Math.max(1, step >> 1)));
     seen = null;
   }
-  return best;
+  return findBest();
 }
 
 /**
@@ -83,14 +81,11 @@ function pickBase(sets: readonly Reading[], accepted: number, price: number): Re
 type Look = { moves: Move[]; nParts: number; nWeeks: number; nDue: number };
 
 async function lookRound(
-  problem: SizingProblem,
-  runs: Runs,
-  needs: Needs["byBuffer"],
+  { problem, runs, tops }: Search,
   levels: Levels,
   steps: readonly number[],
   part: Sample,
 ): Promise<Look> {
-  const tops = needs.map(({ top }) => top);
   const [from, ...moved] = await runs.read([levels, ...neighbours(levels, steps, tops)], part);
   const moves = moved.flatMap((to) => {
     const b = to.levels.findIndex((level, i) => level !== from.levels[i]);
@@ -124,11 +119,10 @@ function joinLooks(one: Look, other: Look): Look {
  * the next ones, by halving the bracket; where joint moves do not help, the best single ones are tried.
  */
 async function tryMoves(
-  runs: Runs,
+  { runs, whole }: Search,
   { moves, nWeeks, nDue }: Look,
   base: Reading,
   accepted: number,
-  whole: Sample,
 ): Promise<{ tried: Reading[]; price: number }> {
   const setOf = ({ moves: set }: Combination): Levels =>
     set.reduce<Levels>((levels, { b, by }) => withLevel(levels, b, levels[b] + by), base.levels);
@@ -163,7 +157,7 @@ export function isBetter(one: Reading, other: Reading, accepted: number): boolea
   return keeps ? one.value < other.value : one.risk < other.risk;
 }
 
-function neighbours(levels: Levels, steps: readonly number[], tops: readonly number[]): Levels[] {
+function neighbours(levels: Levels, steps: readonly number[], tops: Levels): Levels[] {
   return levels.flatMap((level, b) => {
     const down = Math.max(0, level - steps[b]);
     const up = Math.min(tops[b], level + steps[b]);

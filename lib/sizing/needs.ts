@@ -1,5 +1,5 @@
-import { type Levels, type SizingProblem, topLevels } from "./problem";
-import type { Reading, Runs, Sample } from "./runs";
+import { type SizingProblem, withLevel } from "./problem";
+import type { Reading, Search } from "./runs";
 import { countBad, countDue, isBad, rateOf } from "./week-rates";
 
 /** What each week needs of one buffer while all others are ample. */
@@ -13,7 +13,8 @@ export type Need = {
   savings: Float64Array;
 };
 
-export type Needs = { ample: Reading; byBuffer: Need[]; sample: Sample };
+/** `ample`: the run with all buffers at their top. */
+export type Needs = { ample: Reading; byBuffer: Need[] };
 
 const mostReadings = 7;
 /** Intervals that matter less than this are not cut further: share of weeks decided in it times its part of the range. */
@@ -24,33 +25,28 @@ const resolution = 0.0015;
  * @remarks In such runs a week's fill rate falls with that buffer's shortage alone, so the size that the week would
  * have needed can be read off between two levels. All runs share their draws: a week is the same week in each.
  */
-export async function measureNeeds(problem: SizingProblem, runs: Runs, sample: Sample): Promise<Needs> {
-  const top = topLevels(problem);
-  const [ample] = await runs.read([top], sample);
+export async function measureNeeds({ problem, runs, tops, part }: Search): Promise<Needs> {
+  const [ample] = await runs.read([tops], part);
   const nDue = Math.max(1, countDue(ample.codes));
   const baseBad = countBad(ample.codes);
   const most = Math.max(...problem.acceptedRisks) + 0.01;
   const addedOf = (reading: Reading) => Math.min(most, Math.max(0, (countBad(reading.codes) - baseBad) / nDue));
-  const ladders = top.map((): Reading[] => [ample]);
+  const ladders = tops.map((): Reading[] => [ample]);
   for (let round = 0; round < mostReadings; round++) {
     const asked = ladders.flatMap((ladder, b) => {
-      const level = nextLevel(problem, ladder, b, top[b], addedOf, most);
-      return level === null ? [] : [{ b, levels: withLevel(top, b, level) }];
+      const level = nextLevel(problem, ladder, b, tops[b], addedOf, most);
+      return level === null ? [] : [{ b, levels: withLevel(tops, b, level) }];
     });
     if (asked.length === 0) break;
     const found = await runs.read(
       asked.map(({ levels }) => levels),
-      sample,
+      part,
     );
     asked.forEach(({ b }, i) => ladders[b].push(found[i]));
     ladders.forEach((ladder, b) => ladder.sort((x, y) => x.levels[b] - y.levels[b]));
   }
   const byBuffer = ladders.map((ladder, b) => readNeed(problem, ladder, b, ample, addedOf, most));
-  return { ample, byBuffer, sample };
-}
-
-export function withLevel(levels: Levels, b: number, level: number): number[] {
-  return levels.map((own, i) => (i === b ? level : own));
+  return { ample, byBuffer };
 }
 
 /** Where to look next on one buffer's ladder, ascending; null: well enough known. */

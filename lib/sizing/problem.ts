@@ -54,6 +54,10 @@ export function topLevels({ buffers }: SizingProblem): number[] {
   return buffers.map(({ min, max, step }) => Math.floor((max - min) / step));
 }
 
+export function withLevel(levels: Levels, b: number, level: number): number[] {
+  return levels.map((own, i) => (i === b ? level : own));
+}
+
 export function sizesOf({ buffers }: SizingProblem, levels: Levels): Record<string, number> {
   return Object.fromEntries(buffers.map(({ id, min, step }, i) => [id, min + levels[i] * step]));
 }

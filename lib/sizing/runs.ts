@@ -23,10 +23,22 @@ type StoredReading = { value: number; risk: number; codes: string; lows: number[
 /** Weeks of some replications of one seed phrase. */
 export type Sample = { seed: string; replications: number; firstReplication: number };
 
+/** What each step of a search works with. */
+export type Search = {
+  problem: SizingProblem;
+  runs: Runs;
+  tops: Levels;
+  /** All weeks of the search, and the part of them that screening looks at. */
+  whole: Sample;
+  part: Sample;
+};
+
 export type Runs = {
   /** Readings of sets of sizes over one sample of weeks, in the order given; runs only those not read before. */
   read(sets: readonly Levels[], sample: Sample): Promise<Reading[]>;
-  /** The whole result of one set; runs it again where only its reading is known. */
+  /** All readings of one sample so far. */
+  known(sample: Sample): Reading[];
+  /** The whole result of one set; too large to be kept of each, so that it may have to be run again. */
   resultOf(levels: Levels, sample: Sample): Promise<RunResult>;
   evaluations(): number;
   /** Runs asked for so far, known ones among them, in runs of all replications. */
@@ -35,13 +47,13 @@ export type Runs = {
 };
 
 /**
- * @param onBatch - Told of the readings of each batch of runs.
+ * @param onBatch - Told after each batch of runs.
  * @throws RangeError where the checkpoint is of another problem.
  */
 export function createRuns(
   problem: SizingProblem,
   evaluate: Evaluate,
-  onBatch: (readings: readonly Reading[], sample: Sample) => void,
+  onBatch: () => void,
   signal?: AbortSignal,
   resume?: Checkpoint,
 ): Runs {
@@ -49,13 +61,19 @@ export function createRuns(
   if (resume && (resume.format !== "forebay.sizing/1" || resume.problem !== name))
     throw new RangeError("the checkpoint belongs to another problem or to another engine");
   const stored: Record<string, StoredReading> = { ...resume?.readings };
-  const readings = new Map<string, Reading>();
+  const readings = new Map<string, Map<string, Reading>>();
   const results = new Map<string, RunResult>();
   let nEvaluations = 0;
   let effort = 0;
 
-  async function run(sets: readonly Levels[], sample: Sample): Promise<void> {
-    if (sets.length === 0) return;
+  function ofSample(sample: Sample): Map<string, Reading> {
+    const name = nameSample(sample);
+    const own = readings.get(name) ?? new Map<string, Reading>();
+    readings.set(name, own);
+    return own;
+  }
+
+  async function run(sets: readonly Levels[], sample: Sample): Promise<RunResult[]> {
     signal?.throwIfAborted();
     const { weeks, warmupWeeks, targetFillRate } = problem;
     const options = { ...sample, weeks, warmupWeeks, targetFillRate };
@@ -65,27 +83,22 @@ export function createRuns(
     );
     nEvaluations += sets.length;
     sets.forEach((levels, i) => {
-      const key = keyOf(levels, sample);
       const reading = readResult(problem, levels, found[i]);
-      readings.set(key, reading);
+      ofSample(sample).set(levels.join(), reading);
       const { value, risk, codes, lows } = reading;
-      stored[key] = { value, risk, codes: toBase64(codes), lows };
-      if (sample.replications === problem.replications) results.set(key, found[i]);
+      stored[keyOf(levels, sample)] = { value, risk, codes: toBase64(codes), lows };
     });
-    onBatch(
-      sets.map((levels) => readings.get(keyOf(levels, sample))!),
-      sample,
-    );
+    onBatch();
+    return found;
   }
 
   function recall(levels: Levels, sample: Sample): Reading | null {
-    const key = keyOf(levels, sample);
-    const known = readings.get(key);
-    if (known) return known;
-    const kept = stored[key];
-    if (!kept) return null;
+    const own = ofSample(sample);
+    const known = own.get(levels.join());
+    const kept = stored[keyOf(levels, sample)];
+    if (known || !kept) return known ?? null;
     const reading = { ...kept, levels, codes: fromBase64(kept.codes) };
-    readings.set(key, reading);
+    own.set(levels.join(), reading);
     return reading;
   }
 
@@ -93,14 +106,18 @@ export function createRuns(
     async read(sets, sample) {
       // Known readings count, so that a resumed search ends where the first would have.
       effort += (sets.length * sample.replications) / problem.replications;
-      const missing = new Map(sets.filter((set) => !recall(set, sample)).map((set) => [keyOf(set, sample), set]));
-      await run([...missing.values()], sample);
+      const missing = new Map(sets.filter((set) => !recall(set, sample)).map((set) => [set.join(), set]));
+      if (missing.size > 0) await run([...missing.values()], sample);
       return sets.map((set) => recall(set, sample)!);
     },
+    known: (sample) => [...ofSample(sample).values()],
     async resultOf(levels, sample) {
       const key = keyOf(levels, sample);
-      if (!results.has(key)) await run([levels], sample);
-      return results.get(key)!;
+      const known = results.get(key);
+      if (known) return known;
+      const [result] = await run([levels], sample);
+      results.set(key, result);
+      return result;
     },
     evaluations: () => nEvaluations,
     effort: () => effort,
@@ -119,8 +136,8 @@ function readResult(problem: SizingProblem, levels: Levels, result: RunResult): 
   };
 }
 
-const keyOf = (levels: Levels, { seed, replications, firstReplication }: Sample): string =>
-  `${levels.join(",")}|${firstReplication}+${replications}|${seed}`;
+const nameSample = ({ seed, replications, firstReplication }: Sample) => `${firstReplication}+${replications}|${seed}`;
+const keyOf = (levels: Levels, sample: Sample): string => `${levels.join()}|${nameSample(sample)}`;
 
 /** All that a reading depends on. */
 function nameOf({ line, buffers, targetFillRate, objective, seed, weeks, warmupWeeks }: SizingProblem): string {

@@ -43,7 +43,6 @@ function needsOf(first: number[], second: number[]): Needs {
   return {
     ample,
     byBuffer: [need(first, 10), need(second, 3)],
-    sample: { seed: "x", replications: 1, firstReplication: 0 },
   };
 }
 
