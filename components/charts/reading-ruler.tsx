@@ -1,20 +1,15 @@
+import type { ComponentProps } from "react";
 import type { ReadingSummary } from "@/lib/schema/lines";
 import { FillRateRuler, rulerStart } from "./fill-rate-ruler";
 
-type Props = { reading: ReadingSummary; from?: number; hasWhisker?: boolean };
+type Ruler = ComponentProps<typeof FillRateRuler>;
+type Props = Omit<Ruler, "p05" | "atRisk" | "p50" | "acceptedRisk"> & {
+  reading: Pick<ReadingSummary, "p05" | "atRisk" | "p50" | "acceptedRisk">;
+};
 
-/** The fill rates of a stored reading on the ruler. */
-export function ReadingRuler({ reading: { p05, atRisk, p50, acceptedRisk }, from, hasWhisker }: Props) {
-  return (
-    <FillRateRuler
-      p05={p05.value}
-      atRisk={atRisk}
-      p50={p50.value}
-      acceptedRisk={acceptedRisk}
-      from={from}
-      hasWhisker={hasWhisker}
-    />
-  );
+/** The fill rates of a reading on the ruler. */
+export function ReadingRuler({ reading: { p05, atRisk, p50, acceptedRisk }, ...rest }: Props) {
+  return <FillRateRuler p05={p05.value} atRisk={atRisk} p50={p50.value} acceptedRisk={acceptedRisk} {...rest} />;
 }
 
 /** Left end of one scale for several readings. */

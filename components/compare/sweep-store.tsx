@@ -1,8 +1,9 @@
 "use client";
 
-import { createContext, type ReactNode, use, useEffect, useMemo, useRef, useState } from "react";
+import { createContext, type ReactNode, use, useMemo, useState } from "react";
 import { type Reading, useLine } from "@/lib/client/line-state";
 import { pairedDifference } from "@/lib/client/paired";
+import { useJob } from "@/lib/client/use-job";
 import { useSimulation } from "@/lib/client/use-simulation";
 import { digestLine } from "@/lib/line";
 import type { Line } from "@/lib/line/types";
@@ -39,77 +40,54 @@ export function SweepProvider({ children }: { children: ReactNode }) {
   const { scenario } = useLine();
   const client = useSimulation();
   const [run, setRun] = useState<SweepRun | null>(null);
-  const [progress, setProgress] = useState<SweepState["progress"]>(null);
-  const [error, setError] = useState<string | null>(null);
-  const abort = useRef<AbortController | null>(null);
-  useEffect(() => () => abort.current?.abort(), []);
+  const { state: job, start, cancel } = useJob<{ size: number; share: number }, void>();
   const scenarioId = scenario.id;
 
-  const state = useMemo((): SweepState => {
-    async function work(
-      own: AbortController,
-      line: Line,
-      digest: string,
-      bufferId: string,
-      sizes: readonly number[],
-      options: ScenarioOptions,
-    ) {
-      const buffer = line.nodes.find(({ id }) => id === bufferId);
-      if (buffer?.kind !== "buffer") throw new Error("the buffer is no longer on the line");
-      const { acceptedRisk, ...runOptions } = options;
-      const base = {
-        scenarioId,
-        digest,
-        options,
-        bufferId,
-        bufferName: buffer.name,
-        currentSize: buffer.size,
-        nSizes: sizes.length,
-      };
-      const readings: SweepRun["readings"] = [];
-      setRun({ ...base, readings });
-      for (const [i, size] of sizes.entries()) {
-        const sized = withSize(line, bufferId, size);
-        setProgress({ size, share: i / sizes.length });
-        const result = await client.run(sized, runOptions, {
-          signal: own.signal,
-          onProgress: ({ replications, total }) =>
-            setProgress({ size, share: (i + replications / total) / sizes.length }),
-        });
-        const reading: Reading = {
-          result,
-          digest: digestLine(sized),
-          options: { ...runOptions, acceptedRisk },
-          ranAt: new Date().toISOString(),
-          engine: result.engine,
-        };
-        readings.push({ size, line: sized, reading });
-        setRun({ ...base, readings: [...readings] });
-      }
-    }
-    return {
+  const state = useMemo(
+    (): SweepState => ({
       run,
-      progress,
-      error,
+      progress: job.status === "running" ? job.progress : null,
+      error: job.status === "failed" ? job.message : null,
+      cancel,
       start(line, digest, bufferId, sizes, options) {
-        abort.current?.abort();
-        const own = (abort.current = new AbortController());
-        setError(null);
-        setProgress({ size: sizes[0], share: 0 });
-        work(own, line, digest, bufferId, sizes, options)
-          .catch((problem: unknown) => {
-            if (!own.signal.aborted) setError(problem instanceof Error ? problem.message : String(problem));
-          })
-          .finally(() => {
-            if (abort.current === own) setProgress(null);
-          });
+        void start({ size: sizes[0], share: 0 }, async (signal, onProgress) => {
+          const buffer = line.nodes.find(({ id }) => id === bufferId);
+          if (buffer?.kind !== "buffer") throw new Error("the buffer is no longer on the line");
+          const { acceptedRisk, ...runOptions } = options;
+          const base = {
+            scenarioId,
+            digest,
+            options,
+            bufferId,
+            bufferName: buffer.name,
+            currentSize: buffer.size,
+            nSizes: sizes.length,
+          };
+          const readings: SweepRun["readings"] = [];
+          setRun({ ...base, readings });
+          for (const [i, size] of sizes.entries()) {
+            const sized = withSize(line, bufferId, size);
+            const show = (share: number) => onProgress({ size, share: (i + share) / sizes.length });
+            show(0);
+            const result = await client.run(sized, runOptions, {
+              signal,
+              onProgress: ({ replications, total }) => show(replications / total),
+            });
+            const reading: Reading = {
+              result,
+              digest: digestLine(sized),
+              options: { ...runOptions, acceptedRisk },
+              ranAt: new Date().toISOString(),
+              engine: result.engine,
+            };
+            readings.push({ size, line: sized, reading });
+            setRun({ ...base, readings: [...readings] });
+          }
+        });
       },
-      cancel() {
-        abort.current?.abort();
-        setProgress(null);
-      },
-    };
-  }, [client, error, progress, run, scenarioId]);
+    }),
+    [cancel, client, job, run, scenarioId, start],
+  );
 
   return <SweepContext value={state}>{children}</SweepContext>;
 }

@@ -1,6 +1,6 @@
 "use client";
 
-import { FillRateRuler } from "@/components/charts/fill-rate-ruler";
+import { ReadingRuler } from "@/components/charts/reading-ruler";
 import { useLine } from "@/lib/client/line-state";
 import { formatMoney, formatNumber, percentileName, withSign } from "@/lib/format";
 import type { Figure } from "@/lib/simulation/types";
@@ -52,14 +52,7 @@ function Ruler({ figures, edited, isLive }: { figures: StripFigures; edited: Fig
         </span>
       </p>
       <div className="mt-1">
-        <FillRateRuler
-          p05={p05.value}
-          atRisk={atRisk}
-          p50={p50.value}
-          acceptedRisk={acceptedRisk}
-          live={edited}
-          isLive={isLive}
-        />
+        <ReadingRuler reading={figures} live={edited} isLive={isLive} />
       </div>
     </>
   );

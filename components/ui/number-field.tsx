@@ -1,7 +1,7 @@
 "use client";
 
 import { type KeyboardEvent, type ReactNode, useId, useState } from "react";
-import { explainNumber, isAmbiguous, readNumber } from "@/lib/line/clipboard";
+import { explainNumber, readNumber } from "@/lib/line/clipboard";
 import { cx } from "./cx";
 import { bareInput, fieldBox, FieldFrame } from "./field-frame";
 
@@ -44,11 +44,7 @@ export function NumberField({
   const isUnreadable = typed !== null && Number.isNaN(readNumber(typed, isWhole));
   const shown =
     typed !== null && (isUnreadable || agree(readNumber(typed, isWhole), value, factor)) ? typed : show(value, factor);
-  const problem = !isUnreadable
-    ? error
-    : isAmbiguous(typed, isWhole)
-      ? `${explainNumber(typed, isWhole)}.`
-      : "Type a number.";
+  const problem = isUnreadable ? `${explainNumber(typed, isWhole)}.` : error;
 
   function take(text: string) {
     setTyped(text);

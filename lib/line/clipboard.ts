@@ -26,7 +26,7 @@ export function readCells(text: string): string[][] {
 /**
  * A number as people and spreadsheets write it: decimal point or comma, thousands parted by spaces, points, commas or
  * apostrophes, a percent sign (divides by 100), a leading or typographic minus.
- * @returns Null for an empty cell, NaN for what is no finite number or may be one of two, see `isAmbiguous`. "1,5" is 1.5;
+ * @returns Null for an empty cell, NaN for what is no finite number or may be one of two, as "1,250" is. "1,5" is 1.5;
  * where `isWhole` asks for a count, a single comma or point before exactly three digits parts thousands.
  */
 export function readNumber(text: string, isWhole = false): number | null {
@@ -45,7 +45,7 @@ export function readNumber(text: string, isWhole = false): number | null {
  * Whether a comma may part thousands as well as decimals: "1,250" is 1250 to some and 1.25 to others. Counts are whole,
  * so that there it parts thousands.
  */
-export function isAmbiguous(text: string, isWhole = false): boolean {
+function isAmbiguous(text: string, isWhole = false): boolean {
   return !isWhole && /^[+-\u2212]?[1-9]\d{0,2},\d{3}%?$/.test(text.replace(/\s/g, ""));
 }
 

@@ -1,9 +1,9 @@
-import type { z } from "zod";
+import { z } from "zod";
 import { AppError } from "@/lib/errors";
 import { DraftLineInput, LayoutInput, NotesInput } from "./draft-schema";
 import { limits, sayCount } from "./limits";
-import { isRecord, shorten } from "./parse-fields";
-import type { DraftLine, LineFile } from "./types";
+import { isRecord, join, shorten } from "./parse-fields";
+import type { LineFile } from "./types";
 
 /**
  * Reads what an export wrote, or a bare line document. Gaps in numbers are fine; the shape has to be that of a line.
@@ -26,36 +26,30 @@ export function readLineFile(json: unknown): LineFile {
       "too-large",
       `The file's line has ${sayCount(line.links.length)} links; the limit is ${sayCount(limits.links)}.`,
     );
-  return {
-    line: readWhole(line),
-    layout: isExport ? read(LayoutInput, json.layout ?? { positions: {} }, "layout") : { positions: {} },
-    notes: isExport ? read(NotesInput, json.notes ?? [], "notes") : [],
-  };
+  const nothing = { layout: { positions: {} }, notes: [] };
+  if (!isExport) return read({ line, ...nothing });
+  return read({ ...json, layout: json.layout ?? nothing.layout, notes: json.notes ?? nothing.notes });
 }
 
+const FileInput = z.object({ line: DraftLineInput, layout: LayoutInput, notes: NotesInput });
+
 /** A draft may have gaps, but a field that nobody knows would be lost without a word. */
-function readWhole(line: Record<string, unknown>): DraftLine {
-  const known = read(DraftLineInput, line, "line");
-  const lost = findLost(line, known, "line");
-  return lost.length === 0 ? known : refuse(lost.map((path) => `${path}: unknown field. Take it out.`));
+function read(file: Record<string, unknown>): LineFile {
+  const result = FileInput.safeParse(file);
+  if (!result.success) return refuse(result.error.issues.map(({ path, message }) => `${path.join(".")}: ${message}.`));
+  const lost = findLost(file, result.data);
+  return lost.length === 0 ? result.data : refuse(lost.map((path) => `${path}: unknown field. Take it out.`));
 }
 
 /** Paths of fields that reading has left out. */
-function findLost(before: unknown, after: unknown, path: string): string[] {
+function findLost(before: unknown, after: unknown, path = ""): string[] {
   if (Array.isArray(before))
     return before.flatMap((item, i) => findLost(item, (after as unknown[])[i], `${path}.${i}`));
   if (!isRecord(before)) return [];
-  return Object.entries(before).flatMap(([key, value]) =>
-    Object.hasOwn(after as object, key)
-      ? findLost(value, (after as Record<string, unknown>)[key], `${path}.${shorten(key)}`)
-      : [`${path}.${shorten(key)}`],
-  );
-}
-
-function read<T>(schema: z.ZodType<T>, value: unknown, where: string): T {
-  const result = schema.safeParse(value);
-  if (result.success) return result.data;
-  return refuse(result.error.issues.map(({ path, message }) => `${[where, ...path].join(".")}: ${message}.`));
+  return Object.entries(before).flatMap(([key, value]) => {
+    const own = join(path, shorten(key));
+    return Object.hasOwn(after as object, key) ? findLost(value, (after as Record<string, unknown>)[key], own) : [own];
+  });
 }
 
 function refuse(sentences: readonly string[]): never {

@@ -47,24 +47,26 @@ export function compileStations(
     stationStart[at + sta.cause] = causeAt(node.id);
     amountStart[position * amtStride + amt.speed] = node.parallel;
   });
-  const start = graph.buffers.length * bufStride + stationStart.length;
+  partInputs(graph, stationStart, inputs);
+  return { stations, inputs: Int32Array.from(inputs), stationStart, amountStart };
+}
+
+/** Lays out each station's inputs once more, behind all of them: those it takes alone as kits, then the others. */
+function partInputs(graph: Graph, stationStart: Int32Array, inputs: number[]): void {
+  const before = graph.buffers.length * bufStride + stationStart.length;
   graph.serviceOrder.forEach((index, position) => {
     const at = position * staStride;
-    const isKit = (buffer: number): boolean => isTakenByOneStation(graph, buffer);
+    const own = graph.stationInputs[index];
+    const kit = own.filter(({ buffer }) => isTakenByOneStation(graph, buffer));
+    const open = own.filter((input) => !kit.includes(input));
     stationStart[at + sta.kit] = inputs.length;
-    for (const { buffer, quantity } of graph.stationInputs[index]) {
-      if (isKit(buffer)) inputs.push(buffer * bufStride, quantity);
-    }
+    for (const { buffer, quantity } of kit) inputs.push(buffer * bufStride, quantity);
     stationStart[at + sta.kitEnd] = inputs.length;
-    stationStart[at + sta.open] = start + inputs.length;
-    for (const { buffer, quantity } of graph.stationInputs[index]) {
-      if (isKit(buffer)) continue;
-      inputs.push(buffer * bufStride, quantity);
-      if (graph.buffers[buffer].replenishment) stationStart[at + sta.sharesStock] = 1;
-    }
-    stationStart[at + sta.openEnd] = start + inputs.length;
+    stationStart[at + sta.open] = before + inputs.length;
+    for (const { buffer, quantity } of open) inputs.push(buffer * bufStride, quantity);
+    stationStart[at + sta.openEnd] = before + inputs.length;
+    stationStart[at + sta.sharesStock] = open.some(({ buffer }) => graph.buffers[buffer].replenishment) ? 1 : 0;
   });
-  return { stations, inputs: Int32Array.from(inputs), stationStart, amountStart };
 }
 
 /** Whether a buffer is purchased and one station takes all of it. */

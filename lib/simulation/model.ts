@@ -166,7 +166,7 @@ export type Model = {
   stations: StationModel[];
   customers: CustomerModel[];
   groups: Group[];
-  /** Pairs (record of the buffer, quantity), station after station. */
+  /** Pairs (record of the buffer, quantity), station after station in link order; then again, kit and other inputs apart. */
   inputs: Int32Array;
   /** `State.stations` and `State.amounts` at the start. */
   stationStart: Int32Array;

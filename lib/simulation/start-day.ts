@@ -84,8 +84,8 @@ function receiveDeliveries(s: State, i: number): void {
 function countRejects(s: State, i: number, units: number): number {
   const { rejectRate, streams } = s.model.suppliers[i];
   const stream = streams.reject * wordsPerStream;
-  const failure = lnFailure(rejectRate);
   if (units * rejectRate > manyRejects) return nextBinomial(s.streams, stream, units, rejectRate);
+  const failure = lnFailure(rejectRate);
   let rejected = 0;
   let left = units;
   while (left >= s.rejectGaps[i]) {

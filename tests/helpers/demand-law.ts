@@ -18,18 +18,19 @@ export function roundedNormalLaw(mean: number, sd: number): Law {
   return Array.from({ length: most + 1 }, (_, k) => below(k + 0.5) - (k === 0 ? 0 : below(k - 0.5)));
 }
 
-/** Law of the sum of `n` independent draws. */
-export function sumLaw(law: Law, n: number): Law {
-  let sum: number[] = [1];
-  for (let i = 0; i < n; i++) {
+/** Law of the sum of independent quantities. */
+export function addLaws(...laws: Law[]): Law {
+  return laws.reduce((sum, law) => {
     const next = new Array<number>(sum.length + law.length - 1).fill(0);
     sum.forEach((p, j) => {
       if (p > tail) law.forEach((q, k) => (next[j + k] += p * q));
     });
-    sum = next;
-  }
-  return sum;
+    return next;
+  });
 }
+
+/** Law of the sum of `n` independent draws. */
+export const sumLaw = (law: Law, n: number): Law => addLaws([1], ...new Array<Law>(n).fill(law));
 
 export const expect = (law: Law, value: (units: number) => number): number =>
   law.reduce((sum, p, units) => sum + p * value(units), 0);

@@ -70,7 +70,7 @@ it("says beside the field what is wrong, and keeps what was typed", () => {
   fireEvent.change(cycle, { target: { value: "six" } });
   expect(cycle.value).toBe("six");
   expect(cycle.getAttribute("aria-invalid")).toBe("true");
-  expect(screen.getByText("Type a number.")).toBeTruthy();
+  expect(screen.getByText("“six” is not a number.")).toBeTruthy();
   expect(node("station", "wind").cycleMinutes).toBe(former);
   fireEvent.change(cycle, { target: { value: "0" } });
   expect(probe.line.faults).toMatchObject([{ node: "wind", path: "cycleMinutes" }]);

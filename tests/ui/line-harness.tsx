@@ -6,6 +6,7 @@ import type { LineActions } from "@/lib/client/line-actions";
 import { LineProvider } from "@/lib/client/line-provider";
 import type { RunHooks, SimulationClient } from "@/lib/client/simulation-client";
 import { SimulationProvider } from "@/lib/client/use-simulation";
+import type { Edit } from "@/lib/line/edits";
 import example from "@/lib/line/example.json";
 import type { DraftLine, Line } from "@/lib/line/types";
 import {
@@ -98,6 +99,11 @@ export function createClient(isHeld: (hooks: RunHooks) => boolean = () => false)
   };
   return { client, pending };
 }
+
+export const rename = (name: string): Edit => ({
+  label: `Rename to ${name}`,
+  apply: (state) => ({ ...state, document: { ...state.document, name } }),
+});
 
 export type Route = (init: RequestInit | undefined) => Response | Promise<Response>;
 

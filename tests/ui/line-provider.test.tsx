@@ -1,9 +1,7 @@
 import { act, screen, waitFor } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
-import { useLayoutEffect } from "react";
 import { describe, expect, it } from "vitest";
-import { useLine, type LineState } from "@/lib/client/line-state";
-import type { Edit } from "@/lib/line/edits";
+import { useLine } from "@/lib/client/line-state";
 import { encodeResult, simulate } from "@/lib/simulation";
 import type { Line } from "@/lib/line/types";
 import { address } from "@/tests/helpers/navigation";
@@ -14,70 +12,68 @@ import {
   createRoutes,
   createScenario,
   exampleDocument,
+  rename,
   renderLine,
   serve,
   smallOptions,
 } from "./line-harness";
+import { createProbe } from "./line-probe";
 
-let line: LineState;
-function Probe() {
-  const state = useLine();
-  useLayoutEffect(() => {
-    line = state;
-  });
+const { probe, Probe } = createProbe(<Shown />);
+function Shown() {
   return (
     <>
-      <output>{state.document.name}</output>
+      <output>{useLine().document.name}</output>
       <input aria-label="Some field" />
     </>
   );
 }
 
-const rename = (name: string): Edit => ({
-  label: `Rename to ${name}`,
-  apply: (state) => ({ ...state, document: { ...state.document, name } }),
-});
 const pause = (ms: number) => act(() => new Promise((resolve) => setTimeout(resolve, ms)));
 
 describe("LineProvider", () => {
   it("reads the document: faults, digest, what is not kept", async () => {
     serve(createRoutes("engineer", [createScenario()]));
     renderLine({ children: <Probe /> });
-    expect(line).toMatchObject({ faults: [], nEditsNotKept: 0, canUndo: false, mayEdit: true });
-    expect(line.digest).toMatch(/^[0-9a-f]{64}$/);
+    expect(probe.line).toMatchObject({ faults: [], nEditsNotKept: 0, canUndo: false, mayEdit: true });
+    expect(probe.line.digest).toMatch(/^[0-9a-f]{64}$/);
     act(() =>
-      line.apply({
+      probe.line.apply({
         label: "Empty it",
         apply: (state) => ({ ...state, document: { ...state.document, nodes: [], links: [] } }),
       }),
     );
-    expect(line.parsed).toBeNull();
-    expect(line.faults.length).toBeGreaterThan(0);
-    expect(line.nEditsNotKept).toBeGreaterThan(0);
+    expect(probe.line.parsed).toBeNull();
+    expect(probe.line.faults.length).toBeGreaterThan(0);
+    expect(probe.line.nEditsNotKept).toBeGreaterThan(0);
   });
 
   it("undoes and redoes with the keys, but not while typing in a field", async () => {
     serve(createRoutes("engineer", [createScenario()]));
     const user = userEvent.setup();
     renderLine({ children: <Probe /> });
-    act(() => line.apply(rename("Drive unit line, two shifts")));
+    act(() => probe.line.apply(rename("Drive unit line, two shifts")));
     await user.click(screen.getByLabelText("Some field"));
     await user.keyboard("{Control>}z{/Control}");
-    expect(line.document.name).toBe("Drive unit line, two shifts");
+    expect(probe.line.document.name).toBe("Drive unit line, two shifts");
     act(() => (document.activeElement as HTMLElement).blur());
     await user.keyboard("{Control>}z{/Control}");
-    expect(line).toMatchObject({ canUndo: false, canRedo: true, redoLabel: "Rename to Drive unit line, two shifts" });
-    expect(line.document.name).toBe("Drive unit line");
+    expect(probe.line).toMatchObject({
+      canUndo: false,
+      canRedo: true,
+      redoLabel: "Rename to Drive unit line, two shifts",
+    });
+    expect(probe.line.document.name).toBe("Drive unit line");
     await user.keyboard("{Control>}y{/Control}");
-    expect(line.document.name).toBe("Drive unit line, two shifts");
+    expect(probe.line.document.name).toBe("Drive unit line, two shifts");
   });
 
   it("saves an edit soon after it, and says when it was saved", async () => {
     const asked = serve(createRoutes("engineer", [createScenario()]));
     renderLine({ children: <Probe /> });
-    act(() => line.apply(rename("Edited")));
-    expect(line.saveState.status).toBe("waiting");
-    await waitFor(() => expect(line.saveState.status).toBe("saved"), { timeout: 3_000 });
+    act(() => probe.line.apply(rename("Edited")));
+    expect(probe.line.saveState.status).toBe("waiting");
+    await waitFor(() => expect(probe.line.saveState.status).toBe("saved"), { timeout: 3_000 });
     const saves = asked.filter(({ route }) => route.startsWith("PUT"));
     expect(saves).toHaveLength(1);
     expect(JSON.parse(String(saves[0].init?.body))).toMatchObject({ revision: 1, document: { name: "Edited" } });
@@ -93,7 +89,7 @@ describe("LineProvider", () => {
     };
     expect(leave()).toBe(false);
     act(() =>
-      line.apply({
+      probe.line.apply({
         label: "Empty it",
         apply: (state) => ({ ...state, document: { ...state.document, nodes: [], links: [] } }),
       }),
@@ -108,11 +104,11 @@ describe("LineProvider", () => {
   it("changes and saves nothing for a viewer, who may still run", async () => {
     const asked = serve(createRoutes("viewer", [createScenario()]));
     renderLine({ role: "viewer", children: <Probe /> });
-    act(() => line.apply(rename("Edited")));
-    act(() => line.runFull());
-    await waitFor(() => expect(line.full?.isCurrent).toBe(true));
+    act(() => probe.line.apply(rename("Edited")));
+    act(() => probe.line.runFull());
+    await waitFor(() => expect(probe.line.full?.isCurrent).toBe(true));
     await pause(700);
-    expect(line.document.name).toBe("Drive unit line");
+    expect(probe.line.document.name).toBe("Drive unit line");
     expect(asked.filter(({ route }) => !route.startsWith("GET"))).toEqual([]);
   });
 
@@ -120,8 +116,8 @@ describe("LineProvider", () => {
     const asked = serve(createRoutes("engineer", [createScenario()]));
     const actions = createActions();
     renderLine({ actions, children: <Probe /> });
-    act(() => line.apply(rename("Edited")));
-    const kept = await act(() => line.keep());
+    act(() => probe.line.apply(rename("Edited")));
+    const kept = await act(() => probe.line.keep());
     expect(kept.ok).toBe(true);
     expect(asked.filter(({ route }) => route.startsWith("PUT"))).toHaveLength(1);
     expect(actions.keepVersion).toHaveBeenCalledWith({ scenarioId: "s-base", revision: 2 });
@@ -134,8 +130,8 @@ describe("LineProvider", () => {
     });
     const actions = createActions();
     renderLine({ actions, children: <Probe /> });
-    act(() => line.apply(rename("Edited")));
-    const kept = await act(() => line.keep());
+    act(() => probe.line.apply(rename("Edited")));
+    const kept = await act(() => probe.line.keep());
     expect(kept).toMatchObject({ ok: false, code: "conflict" });
     expect(actions.keepVersion).not.toHaveBeenCalled();
   });
@@ -145,26 +141,26 @@ describe("LineProvider", () => {
     const scenario = createScenario({ draft });
     serve(createRoutes("engineer", [scenario]));
     renderLine({ scenarios: [scenario], children: <Probe /> });
-    act(() => line.revert());
-    expect(line).toMatchObject({ nEditsNotKept: 0, undoLabel: "Revert to version 1" });
-    act(() => line.undo());
-    expect(line.document.name).toBe("Edited");
+    act(() => probe.line.revert());
+    expect(probe.line).toMatchObject({ nEditsNotKept: 0, undoLabel: "Revert to version 1" });
+    act(() => probe.line.undo());
+    expect(probe.line.document.name).toBe("Edited");
   });
 
   it("takes a live reading after an edit, and none while a full run says the same", async () => {
     serve(createRoutes("engineer", [createScenario()]));
     renderLine({ children: <Probe /> });
-    await waitFor(() => expect(line.live).not.toBeNull());
-    expect(line.live?.digest).toBe(line.digest);
-    act(() => line.runFull());
-    await waitFor(() => expect(line.full?.isCurrent).toBe(true));
-    expect(line.isLiveRunning).toBe(false);
-    act(() => line.setOptions({ seed: "another" }));
-    expect(line.full?.isCurrent).toBe(false);
-    expect(line.isLiveRunning).toBe(true);
-    await waitFor(() => expect(line.live?.options.seed).toBe("another"));
-    act(() => line.undo());
-    expect(line.full?.isCurrent).toBe(true);
+    await waitFor(() => expect(probe.line.live).not.toBeNull());
+    expect(probe.line.live?.digest).toBe(probe.line.digest);
+    act(() => probe.line.runFull());
+    await waitFor(() => expect(probe.line.full?.isCurrent).toBe(true));
+    expect(probe.line.isLiveRunning).toBe(false);
+    act(() => probe.line.setOptions({ seed: "another" }));
+    expect(probe.line.full?.isCurrent).toBe(false);
+    expect(probe.line.isLiveRunning).toBe(true);
+    await waitFor(() => expect(probe.line.live?.options.seed).toBe("another"));
+    act(() => probe.line.undo());
+    expect(probe.line.full?.isCurrent).toBe(true);
   });
 
   it("selects nodes, links and notes, and lets go of what an undo takes away", () => {
@@ -178,12 +174,12 @@ describe("LineProvider", () => {
       author: "Ines Kallweit",
       at: "2026-11-24T14:02:00Z",
     };
-    act(() => line.apply({ label: "Add a note", apply: (state) => ({ ...state, notes: [note] }) }));
+    act(() => probe.line.apply({ label: "Add a note", apply: (state) => ({ ...state, notes: [note] }) }));
     const [{ from, to }] = exampleDocument.links;
-    act(() => line.select([from, `${from}>${to}`, "note-1"]));
-    expect(line.selection).toEqual([from, `${from}>${to}`, "note-1"]);
-    act(() => line.undo());
-    expect(line.selection).toEqual([from, `${from}>${to}`]);
+    act(() => probe.line.select([from, `${from}>${to}`, "note-1"]));
+    expect(probe.line.selection).toEqual([from, `${from}>${to}`, "note-1"]);
+    act(() => probe.line.undo());
+    expect(probe.line.selection).toEqual([from, `${from}>${to}`]);
   });
 
   it("stores a full run with the scenario, and says so when that fails", async () => {
@@ -193,12 +189,12 @@ describe("LineProvider", () => {
         Response.json({ code: "too-large", message: "The result is larger than 4 MB." }, { status: 413 }),
     });
     renderLine({ children: <Probe /> });
-    act(() => line.runFull());
-    await waitFor(() => expect(line.runError).toMatch(/could not be stored: The result is larger than 4 MB/));
-    expect(line.full?.isCurrent).toBe(true);
+    act(() => probe.line.runFull());
+    await waitFor(() => expect(probe.line.runError).toMatch(/could not be stored: The result is larger than 4 MB/));
+    expect(probe.line.full?.isCurrent).toBe(true);
     const [stored] = asked.filter(({ route }) => route.startsWith("POST"));
-    expect(new Headers(stored.init?.headers).get("x-document-digest")).toBe(line.digest);
-    expect(stored.init?.body).toEqual(encodeResult(line.full!.result));
+    expect(new Headers(stored.init?.headers).get("x-document-digest")).toBe(probe.line.digest);
+    expect(stored.init?.body).toEqual(encodeResult(probe.line.full!.result));
   });
 
   it("cancels a run with Esc and starts it with R", async () => {
@@ -207,25 +203,28 @@ describe("LineProvider", () => {
     const user = userEvent.setup();
     renderLine({ client, children: <Probe /> });
     await user.keyboard("r");
-    expect(line.progress).toMatchObject({ doneWeeks: 0, totalWeeks: 12 });
+    expect(probe.line.progress).toMatchObject({ doneWeeks: 0, totalWeeks: 12 });
     act(() => pending[0].hooks.onProgress?.({ replications: 2, total: 4, partial: null }));
-    expect(line.progress?.doneWeeks).toBe(6);
+    expect(probe.line.progress?.doneWeeks).toBe(6);
     await user.keyboard("{Escape}");
-    expect(line.progress).toBeNull();
+    expect(probe.line.progress).toBeNull();
     await pause(0);
-    expect(line).toMatchObject({ full: null, runError: null });
+    expect(probe.line).toMatchObject({ full: null, runError: null });
     await user.keyboard("r");
     await act(async () => pending[1].finish());
-    await waitFor(() => expect(line.full?.isCurrent).toBe(true));
+    await waitFor(() => expect(probe.line.full?.isCurrent).toBe(true));
   });
 
   it("says in words why a run failed", async () => {
     serve(createRoutes("engineer", [createScenario()]));
     const { client, pending } = createClient(({ priority }) => priority !== "live");
     renderLine({ client, children: <Probe /> });
-    act(() => line.runFull());
+    act(() => probe.line.runFull());
     await act(async () => pending[0].fail(new Error("The run stopped because a worker of this page failed.")));
-    expect(line).toMatchObject({ progress: null, runError: "The run stopped because a worker of this page failed." });
+    expect(probe.line).toMatchObject({
+      progress: null,
+      runError: "The run stopped because a worker of this page failed.",
+    });
   });
 
   it("reads a stored result back", async () => {
@@ -250,9 +249,9 @@ describe("LineProvider", () => {
       "GET /api/results/r-1": () => new Response(encodeResult(result) as Uint8Array<ArrayBuffer>),
     });
     renderLine({ role: "viewer", scenarios: [scenario], children: <Probe /> });
-    await waitFor(() => expect(line.full?.isCurrent).toBe(true));
-    expect(line.full?.result).toEqual(result);
-    expect(line.live).toBeNull();
+    await waitFor(() => expect(probe.line.full?.isCurrent).toBe(true));
+    expect(probe.line.full?.result).toEqual(result);
+    expect(probe.line.live).toBeNull();
   });
 
   it("offers both drafts after a conflict", async () => {
@@ -270,13 +269,13 @@ describe("LineProvider", () => {
         ),
     });
     renderLine({ children: <Probe /> });
-    act(() => line.apply(rename("Mine")));
-    await waitFor(() => expect(line.saveState.status).toBe("stale"), { timeout: 3_000 });
-    act(() => line.resolveStale("theirs"));
-    expect(line).toMatchObject({ saveState: { status: "saved" }, canUndo: true });
-    expect(line.document.name).toBe("Theirs");
-    act(() => line.undo());
-    expect(line.document.name).toBe("Mine");
+    act(() => probe.line.apply(rename("Mine")));
+    await waitFor(() => expect(probe.line.saveState.status).toBe("stale"), { timeout: 3_000 });
+    act(() => probe.line.resolveStale("theirs"));
+    expect(probe.line).toMatchObject({ saveState: { status: "saved" }, canUndo: true });
+    expect(probe.line.document.name).toBe("Theirs");
+    act(() => probe.line.undo());
+    expect(probe.line.document.name).toBe("Mine");
   });
 
   it("keeps each scenario's history while another is on screen", async () => {
@@ -288,16 +287,16 @@ describe("LineProvider", () => {
     const all = [createScenario(), other];
     serve(createRoutes("engineer", all));
     const view = renderLine({ scenarios: all, children: <Probe /> });
-    act(() => line.apply(rename("Edited")));
-    act(() => line.selectScenario("s-2"));
+    act(() => probe.line.apply(rename("Edited")));
+    act(() => probe.line.selectScenario("s-2"));
     expect(address.push).toHaveBeenCalledWith("/lines/l-1/sketch?scenario=s-2", { scroll: false });
     address.search = "scenario=s-2";
     view.rerender(view.again());
-    await waitFor(() => expect(line.document.name).toBe("Other"));
-    expect(line.canUndo).toBe(false);
+    await waitFor(() => expect(probe.line.document.name).toBe("Other"));
+    expect(probe.line.canUndo).toBe(false);
     address.search = "";
     view.rerender(view.again());
-    await waitFor(() => expect(line.document.name).toBe("Edited"));
-    expect(line.undoLabel).toBe("Rename to Edited");
+    await waitFor(() => expect(probe.line.document.name).toBe("Edited"));
+    expect(probe.line.undoLabel).toBe("Rename to Edited");
   });
 });

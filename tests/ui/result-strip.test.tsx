@@ -1,9 +1,8 @@
 import { act, screen, waitFor, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
-import { useLayoutEffect } from "react";
 import { describe, expect, it } from "vitest";
 import { ResultStrip } from "@/components/line/result-strip";
-import { useLine, type LineState } from "@/lib/client/line-state";
+
 import { simulate, type RunOptions } from "@/lib/simulation";
 import type { Line } from "@/lib/line/types";
 import {
@@ -15,15 +14,9 @@ import {
   serve,
   smallOptions,
 } from "./line-harness";
+import { createProbe } from "./line-probe";
 
-let line: LineState;
-function Probe() {
-  const state = useLine();
-  useLayoutEffect(() => {
-    line = state;
-  });
-  return <ResultStrip />;
-}
+const { probe, Probe } = createProbe(<ResultStrip />);
 
 const heldFull = () => createClient(({ priority }) => priority !== "live");
 const held = () => createClient(() => true);
@@ -50,14 +43,14 @@ describe("ResultStrip", () => {
   it("puts the sentence of the full run first, then what an edit does to it", async () => {
     serve(createRoutes("engineer", [createScenario()]));
     renderLine({ children: <Probe /> });
-    act(() => line.runFull());
-    await waitFor(() => expect(line.full?.isCurrent).toBe(true));
-    const { p10 } = line.full!.result.summary;
+    act(() => probe.line.runFull());
+    await waitFor(() => expect(probe.line.full?.isCurrent).toBe(true));
+    const { p10 } = probe.line.full!.result.summary;
     expect(strip()).toHaveTextContent(`In 9 of 10 weeks we ship at least ${percentText(p10.value)}`, {
       normalizeWhitespace: false,
     });
     expect(screen.getByRole("button", { name: /Run again/ })).toBeInTheDocument();
-    act(() => line.setOptions({ seed: "another" }));
+    act(() => probe.line.setOptions({ seed: "another" }));
     expect(strip()).toHaveTextContent("Reading your edit");
     await waitFor(() => expect(strip()).toHaveTextContent(/With your edit, about/));
     expect(strip()).toHaveTextContent(/if kept/);
@@ -86,7 +79,7 @@ describe("ResultStrip", () => {
     renderLine({ children: <Probe /> });
     const station = exampleDocument.nodes.find(({ kind }) => kind === "station")!;
     act(() =>
-      line.apply({
+      probe.line.apply({
         label: "Clear the cycle",
         apply: (state) => ({
           ...state,
@@ -101,16 +94,16 @@ describe("ResultStrip", () => {
     );
     expect(strip()).toHaveTextContent("Cannot run: 1 fault.");
     expect(screen.getByRole("button", { name: /Run 12 weeks/ })).toBeDisabled();
-    await user.click(within(strip()).getByRole("button", { name: `${station.name}: ${line.faults[0].message}` }));
-    expect(line.selection).toEqual([station.id]);
+    await user.click(within(strip()).getByRole("button", { name: `${station.name}: ${probe.line.faults[0].message}` }));
+    expect(probe.line.selection).toEqual([station.id]);
   });
 
   it("says what stopped a run, and lets it be started again", async () => {
     serve(createRoutes("engineer", [createScenario()]));
     const { client, pending } = heldFull();
     renderLine({ client, children: <Probe /> });
-    await waitFor(() => expect(line.live).not.toBeNull());
-    act(() => line.runFull());
+    await waitFor(() => expect(probe.line.live).not.toBeNull());
+    act(() => probe.line.runFull());
     await act(async () => pending[0].fail(new Error("The run stopped because a worker of this page failed.")));
     expect(strip()).toHaveTextContent("The run stopped because a worker of this page failed.");
     expect(screen.getByRole("button", { name: /Run 12 weeks/ })).toBeEnabled();
@@ -123,7 +116,7 @@ describe("ResultStrip", () => {
     const weeks = screen.getByLabelText("Weeks");
     await user.clear(weeks);
     await user.type(weeks, "13{Enter}");
-    expect(line.options).toMatchObject({ replications: 5, weeks: 3 });
+    expect(probe.line.options).toMatchObject({ replications: 5, weeks: 3 });
     expect(weeks).toHaveValue("15");
     await user.clear(weeks);
     await user.type(weeks, "many{Enter}");

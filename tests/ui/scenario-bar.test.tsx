@@ -1,12 +1,10 @@
 import { act, screen, waitFor, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
-import { useLayoutEffect } from "react";
 import { describe, expect, it } from "vitest";
 import { BarSlots, BarTools } from "@/components/line/bar-slot";
 import { ScenarioBar } from "@/components/line/scenario-bar";
 import { StaleDialog } from "@/components/line/stale-dialog";
-import { useLine, type LineState } from "@/lib/client/line-state";
-import type { Edit } from "@/lib/line/edits";
+
 import type { Role } from "@/lib/schema/roles";
 import {
   createActions,
@@ -14,31 +12,21 @@ import {
   createRoutes,
   createScenario,
   exampleDocument,
+  rename,
   renderLine,
   serve,
 } from "./line-harness";
+import { createProbe } from "./line-probe";
 
-let line: LineState;
-function Probe() {
-  const state = useLine();
-  useLayoutEffect(() => {
-    line = state;
-  });
-  return (
-    <BarSlots>
-      <ScenarioBar />
-      <BarTools>
-        <button type="button">A tool of the view</button>
-      </BarTools>
-      <StaleDialog />
-    </BarSlots>
-  );
-}
-
-const rename = (name: string): Edit => ({
-  label: `Rename to ${name}`,
-  apply: (state) => ({ ...state, document: { ...state.document, name } }),
-});
+const { probe, Probe } = createProbe(
+  <BarSlots>
+    <ScenarioBar />
+    <BarTools>
+      <button type="button">A tool of the view</button>
+    </BarTools>
+    <StaleDialog />
+  </BarSlots>,
+);
 
 function show(role: Role = "engineer") {
   serve(createRoutes(role, [createScenario()]));
@@ -51,7 +39,7 @@ describe("ScenarioBar", () => {
   it("counts the edits that are not kept, undoes them and says what it would undo", async () => {
     const { user } = show();
     expect(screen.queryByText(/not kept/)).toBeNull();
-    act(() => line.apply(rename("Two shifts")));
+    act(() => probe.line.apply(rename("Two shifts")));
     expect(screen.getByText("1 edit not kept")).toBeInTheDocument();
     await user.click(screen.getByRole("button", { name: "Undo: Rename to Two shifts" }));
     expect(screen.queryByText(/not kept/)).toBeNull();
@@ -61,7 +49,7 @@ describe("ScenarioBar", () => {
 
   it("keeps the edits in the scenario after saving them", async () => {
     const { user, actions } = show();
-    act(() => line.apply(rename("Two shifts")));
+    act(() => probe.line.apply(rename("Two shifts")));
     await user.click(screen.getByRole("button", { name: "Keep in As run today" }));
     await waitFor(() => expect(actions.keepVersion).toHaveBeenCalledWith({ scenarioId: "s-base", revision: 2 }));
   });
@@ -69,14 +57,14 @@ describe("ScenarioBar", () => {
   it("shows why keeping failed", async () => {
     const { user, actions } = show();
     actions.keepVersion.mockResolvedValue({ ok: false, code: "stale", message: "Jonas Weber has saved this draft." });
-    act(() => line.apply(rename("Two shifts")));
+    act(() => probe.line.apply(rename("Two shifts")));
     await user.click(screen.getByRole("button", { name: "Keep in As run today" }));
     expect(await screen.findByRole("alert")).toHaveTextContent("Jonas Weber has saved this draft.");
   });
 
   it("saves what is on screen as a scenario of its own, under a free name", async () => {
     const { user, actions } = show();
-    act(() => line.apply(rename("Two shifts")));
+    act(() => probe.line.apply(rename("Two shifts")));
     await user.click(screen.getByRole("button", { name: "Save as scenario" }));
     const dialog = await screen.findByRole("dialog");
     expect(within(dialog).getByLabelText("Name")).toHaveValue("As run today, variant");
@@ -98,15 +86,15 @@ describe("ScenarioBar", () => {
     const { user } = show();
     const [link] = exampleDocument.links;
     act(() =>
-      line.apply({
+      probe.line.apply({
         label: "Cut a link",
         apply: (state) => ({ ...state, document: { ...state.document, links: state.document.links.slice(1) } }),
       }),
     );
     await user.click(screen.getByRole("button", { name: /^Checked: \d+ faults?/ }));
-    const fault = line.faults.find(({ node }) => node === link.from || node === link.to)!;
+    const fault = probe.line.faults.find(({ node }) => node === link.from || node === link.to)!;
     await user.click(await screen.findByRole("button", { name: (name) => name.endsWith(fault.message) }));
-    expect(line.selection).toEqual([fault.node]);
+    expect(probe.line.selection).toEqual([fault.node]);
   });
 
   it("imports a file as one edit that can be undone", async () => {
@@ -116,10 +104,10 @@ describe("ScenarioBar", () => {
       screen.getByLabelText("Line file"),
       new File([text], "another.json", { type: "application/json" }),
     );
-    await waitFor(() => expect(line.document.name).toBe("Another plant"));
-    expect(line.undoLabel).toBe("Import another.json");
-    act(() => line.undo());
-    expect(line.document.name).toBe("Drive unit line");
+    await waitFor(() => expect(probe.line.document.name).toBe("Another plant"));
+    expect(probe.line.undoLabel).toBe("Import another.json");
+    act(() => probe.line.undo());
+    expect(probe.line.document.name).toBe("Drive unit line");
   });
 
   it("says what is wrong with a file and changes nothing", async () => {
@@ -128,7 +116,7 @@ describe("ScenarioBar", () => {
     const dialog = await screen.findByRole("dialog");
     expect(dialog).toHaveTextContent("broken.json was not imported");
     expect(dialog).toHaveTextContent(/is not a JSON file.*Nothing was changed\./);
-    expect(line.canUndo).toBe(false);
+    expect(probe.line.canUndo).toBe(false);
   });
 
   it("has a place for the tools of the view", () => {
@@ -159,14 +147,14 @@ describe("StaleDialog", () => {
     });
     const user = userEvent.setup();
     renderLine({ children: <Probe /> });
-    act(() => line.apply(rename("Mine")));
+    act(() => probe.line.apply(rename("Mine")));
     const dialog = await screen.findByRole("dialog", {}, { timeout: 3_000 });
     expect(dialog).toHaveTextContent("Jonas Weber edited As run today meanwhile.");
     expect(dialog).toHaveTextContent("Name: Theirs → Mine");
     await user.keyboard("{Escape}");
     expect(screen.getByRole("dialog")).toBeInTheDocument();
     await user.click(screen.getByRole("button", { name: "Take theirs" }));
-    expect(line.document.name).toBe("Theirs");
+    expect(probe.line.document.name).toBe("Theirs");
     await waitFor(() => expect(screen.queryByRole("dialog")).toBeNull());
   });
 });

@@ -38,6 +38,13 @@ it("refuses fields that it would lose, and names where they stand", () => {
   expect(() => readLineFile(odd)).toThrow(
     /line\.calendar\.shifts: unknown field.*line\.nodes\.1\.colour: unknown field/s,
   );
+  for (const [path, value] of [
+    ["size", 3],
+    ["layout.zoom", 2],
+    ["layout.positions.lam.z", 1],
+    ["notes.0.colour", "red"],
+  ] as const)
+    expect(() => readLineFile(setPath(plain(), path, value))).toThrow(`${path}: unknown field`);
   // Also where a limit would refuse the line's numbers first.
   expect(() => readLineFile(setPath(odd, "calendar.tickMinutes", 0.001))).toThrow(/unknown field/);
 });

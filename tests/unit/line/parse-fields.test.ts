@@ -103,6 +103,7 @@ describe("distributions", () => {
     [{ type: "uniform", min: 2, max: 2 }, "max"],
     [{ type: "triangular", min: 0, mode: 0, max: 1 }, null],
     [{ type: "triangular", min: 0, mode: 2, max: 1 }, "mode"],
+    [{ type: "triangular", min: 1, mode: 0, max: 2 }, "mode"],
     [{ type: "triangular", min: 1, mode: 1, max: 1 }, "max"],
     [{ type: "poisson", mean: 4 }, null],
     [{ type: "poisson", mean: 0 }, "mean"],
@@ -208,6 +209,22 @@ describe("choices, texts and blocks", () => {
 });
 
 describe("documents that are none", () => {
+  it("answers even where fields lie 100 000 deep", () => {
+    const depth = 100_000;
+    const deep = JSON.parse(`${'{"a":'.repeat(depth)}1${"}".repeat(depth)}`) as unknown;
+    expect(faultsOf(deep).length).toBeGreaterThan(0);
+    expect(faultsOf({ ...exampleLine, money: deep }).length).toBeGreaterThan(0);
+  });
+
+  it("takes names of the language for ids and kinds like any other", () => {
+    for (const name of ["__proto__", "constructor", "toString"]) {
+      expect(faultsOf(setPath(exampleLine, `${at("wind")}.kind`, name))).toContainEqual(
+        expect.objectContaining({ node: "wind", path: "kind" }),
+      );
+      expect(faultsOf(setPath(exampleLine, `${demand}.type`, name))).toMatchObject([{ path: "weeklyDemand.type" }]);
+    }
+  });
+
   it.each([null, 7, "line", true, [], [exampleLine], {}])("%j", (json) =>
     expect(faultsOf(json).length).toBeGreaterThan(0),
   );
@@ -246,6 +263,10 @@ describe("sizes beyond the limits are refused first, alone and at once", () => {
 
   it("a day has to be a whole number of ticks", () => {
     expect(faultsOf(setPath(exampleLine, "calendar.tickMinutes", 7))).toMatchObject([{ path: "calendar.tickMinutes" }]);
+    // So long a tick that a day is none of it, within rounding.
+    expect(faultsOf(setPath(exampleLine, "calendar.tickMinutes", 1e13))).toMatchObject([
+      { path: "calendar.tickMinutes" },
+    ]);
     expect(faultsOf(setPath(exampleLine, "calendar.tickMinutes", 3_000))).toMatchObject([
       { path: "calendar.tickMinutes" },
     ]);
