@@ -3,7 +3,11 @@ import { describeAbout } from "@/lib/line/describe-fault";
 import { exampleLine } from "@/lib/line/example";
 
 it.each([
-  ["puts the node's name in front", { node: "wind", message: "Scrap is a share." }, "Stator winding: Scrap is a share."],
+  [
+    "puts the node's name in front",
+    { node: "wind", message: "Scrap is a share." },
+    "Stator winding: Scrap is a share.",
+  ],
   ["says a name once", { node: "wind", message: "Stator winding has no input." }, "Stator winding has no input."],
   [
     "names both ends of a link",
