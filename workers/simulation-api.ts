@@ -9,6 +9,7 @@ import {
   type RunOptions,
   type RunResult,
 } from "@/lib/simulation";
+import { traceWeek, type WeekTrace } from "@/lib/simulation/trace";
 
 /** `ms`: time the worker spent on it, from which the next block is sized. */
 export type Answer<T> = { ok: true; value: T; ms: number } | Failure;
@@ -19,6 +20,7 @@ export type SimulationApi = {
   simulate(options: RunOptions): Answer<RunResult>;
   merge(parts: RunResult[]): Answer<RunResult>;
   lowestLevels(options: RunOptions, bufferId: string): Answer<LowestLevels>;
+  traceWeek(options: RunOptions, replication: number, week: number): Answer<WeekTrace>;
 };
 
 /**
@@ -51,6 +53,14 @@ export function createSimulationApi(now: () => number): SimulationApi {
       answer(
         () => lowestLevels(lineOf(), options, bufferId),
         ({ lowest }) => [lowest.buffer],
+      ),
+    traceWeek: (options, replication, week) =>
+      answer(
+        () => traceWeek(lineOf(), options, replication, week),
+        ({ buffers, stations }) => [
+          ...buffers.map(({ levels }) => levels.buffer),
+          ...stations.flatMap(({ states, lacking }) => [states.buffer, lacking.buffer]),
+        ],
       ),
   };
 }

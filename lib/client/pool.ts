@@ -1,11 +1,12 @@
 import { transfer } from "comlink";
 import type { Line } from "@/lib/line/types";
 import { checkOptions } from "@/lib/simulation/options";
+import type { WeekTrace } from "@/lib/simulation/trace-types";
 import type { RunOptions, RunResult } from "@/lib/simulation/types";
 import { listBuffers } from "@/workers/simulation-api";
 import { createBlockJob } from "./block-job";
 import { createCrew, type Call, type Job } from "./crew";
-import type { LowestLevels, RunHooks, SimulationClient } from "./simulation-client";
+import type { LowestLevels, Priority, RunHooks, SimulationClient } from "./simulation-client";
 import { startBrowserWorker, type WorkerHandle } from "./worker-handle";
 
 export type PoolSettings = { nWorkers?: number; startWorker?(): WorkerHandle; now?(): number; startLimitMs?: number };
@@ -64,7 +65,7 @@ export function createSimulationClient(settings: PoolSettings = {}): SimulationC
         return createBlockJob<RunResult>({
           line,
           options: checked,
-          rank: hooks.priority === "live" ? 1 : 0,
+          rank: rankOf(hooks),
           nWorkers,
           send: (api, part) => api.simulate(part),
           onBlock(part, done) {
@@ -86,7 +87,7 @@ export function createSimulationClient(settings: PoolSettings = {}): SimulationC
         return createBlockJob<{ first: number; levels: LowestLevels }>({
           line,
           options: checked,
-          rank: hooks.priority === "live" ? 1 : 0,
+          rank: rankOf(hooks),
           nWorkers,
           async send(api, part) {
             const answer = await api.lowestLevels(part, bufferId);
@@ -102,12 +103,28 @@ export function createSimulationClient(settings: PoolSettings = {}): SimulationC
         });
       });
     },
+    async traceWeek(line, options, replication, week, hooks = {}) {
+      const checked = checkOptions(options);
+      return start<WeekTrace>(hooks, ({ resolve, reject }) => {
+        const call: Call = {
+          line,
+          expectedMs: null,
+          send: (api) => api.traceWeek(checked, replication, week),
+          receive: (value) => resolve(value as WeekTrace),
+        };
+        const calls = [call];
+        return { rank: hooks.priority === "live" ? 1 : 0, next: () => calls.pop() ?? null, fail: reject };
+      });
+    },
     close() {
       for (const stop of [...pending]) stop(abortError());
       crew.close();
     },
   };
 }
+
+const ranks: Record<Priority, number> = { full: 0, live: 1, search: 2 };
+const rankOf = ({ priority = "full" }: RunHooks): number => ranks[priority];
 
 /** Collects the parts of a run and has them merged by a worker, so that the page never stands still for it. */
 function createGathering(

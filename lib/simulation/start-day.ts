@@ -81,7 +81,7 @@ function receiveDeliveries(s: State, i: number): void {
 }
 
 /** Each unit fails inspection on its own; the gap to the next failure runs on over deliveries. */
-function countRejects(s: State, i: number, units: number): number {
+export function countRejects(s: State, i: number, units: number): number {
   const { rejectRate, streams } = s.model.suppliers[i];
   const stream = streams.reject * wordsPerStream;
   if (units * rejectRate > manyRejects) return nextBinomial(s.streams, stream, units, rejectRate);

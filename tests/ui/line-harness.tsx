@@ -95,6 +95,7 @@ export function createClient(isHeld: (hooks: RunHooks) => boolean = () => false)
     nWorkers: 1,
     run,
     lowestLevels: () => Promise.reject(new Error("not asked for here")),
+    traceWeek: () => Promise.reject(new Error("not asked for here")),
     close: () => undefined,
   };
   return { client, pending };

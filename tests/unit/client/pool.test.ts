@@ -5,6 +5,7 @@ import type { SimulationClient } from "@/lib/client/simulation-client";
 import example from "@/lib/line/example.json";
 import type { Line } from "@/lib/line/types";
 import { lowestLevels, simulate, type RunOptions, type RunResult } from "@/lib/simulation";
+import { traceWeek } from "@/lib/simulation/trace";
 import type { Answer } from "@/workers/simulation-api";
 import { createFakeCrew, type FakeCrew } from "./fake-workers";
 
@@ -64,6 +65,14 @@ describe("createSimulationClient", () => {
     const buffer = line.nodes.find(({ kind }) => kind === "buffer")!.id;
     const found = await createClient(createFakeCrew(), 3).lowestLevels(line, options, buffer);
     expect(found).toEqual(lowestLevels(line, options, buffer));
+  });
+
+  it("traces one week in one worker, and says what cannot be traced", async () => {
+    const crew = createFakeCrew();
+    const client = createClient(crew, 3);
+    expect(await client.traceWeek(line, options, 7, 3)).toEqual(traceWeek(line, options, 7, 3));
+    expect(crew.nStarted).toBe(1);
+    await expect(client.traceWeek(line, options, 24, 3)).rejects.toThrow("replication must be");
   });
 
   it("tells progress with merged partial results, and less than ten times a second", async () => {
