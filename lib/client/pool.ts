@@ -113,7 +113,7 @@ export function createSimulationClient(settings: PoolSettings = {}): SimulationC
           receive: (value) => resolve(value as WeekTrace),
         };
         const calls = [call];
-        return { rank: hooks.priority === "live" ? 1 : 0, next: () => calls.pop() ?? null, fail: reject };
+        return { rank: rankOf(hooks), next: () => calls.pop() ?? null, fail: reject };
       });
     },
     close() {
