@@ -2,13 +2,12 @@
 
 import { createContext, type ReactNode, use, useMemo, useState } from "react";
 import { type Reading, useLine } from "@/lib/client/line-state";
-import { pairedDifference } from "@/lib/client/paired";
 import { useJob } from "@/lib/client/use-job";
 import { useSimulation } from "@/lib/client/use-simulation";
 import { digestLine } from "@/lib/line";
 import type { Line } from "@/lib/line/types";
 import type { ScenarioOptions, Sweep, SweepRow } from "@/lib/schema/lines";
-import { percentile } from "@/lib/simulation";
+import { pairedDifference, percentile } from "@/lib/simulation";
 import type { RunResult } from "@/lib/simulation/types";
 import { withSize } from "@/lib/sizing/with-size";
 

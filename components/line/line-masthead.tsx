@@ -12,6 +12,7 @@ const views = [
   { segment: "sketch", label: "Sketch" },
   { segment: "readings", label: "Readings" },
   { segment: "compare", label: "Compare" },
+  { segment: "sizing", label: "Sizing" },
 ] as const;
 
 /** Where one is, the views of the line, whether it is saved, and the way to share it. */

@@ -1,7 +1,8 @@
 import type { LineState, Reading } from "@/lib/client/line-state";
-import { moveFigure, pairedDifference } from "@/lib/client/paired";
+import { moveFigure } from "@/lib/client/paired";
 import { totalWeeks } from "@/lib/client/run-size";
 import type { ReadingSummary } from "@/lib/schema/lines";
+import { pairedDifference } from "@/lib/simulation/paired";
 import { percentile } from "@/lib/simulation/percentile";
 import type { Figure, RunResult } from "@/lib/simulation/types";
 

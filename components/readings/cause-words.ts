@@ -13,12 +13,16 @@ const words: Record<CauseReason, string> = {
 /** A few long bars, and one for all the short ones together. */
 const mostRows = 8;
 
+/** A root cause in words: "Controller boards: late". */
+export function causeLabel(document: DraftLine, node: string, reason: CauseReason): string {
+  return `${document.nodes.find(({ id }) => id === node)?.name ?? node}: ${words[reason]}`;
+}
+
 /** Root causes in words, the longest first; "late" and "disrupted" are the supplier's, "size" the buffer's. */
 export function causeRows({ causes }: RunResult, document: DraftLine): CauseRow[] {
-  const names = new Map(document.nodes.map((node) => [node.id, node.name]));
   const rows = causes.map(({ node, reason, hoursPerWeek }, i) => ({
     key: `${node} ${reason}`,
-    label: `${names.get(node) ?? node}: ${words[reason]}`,
+    label: causeLabel(document, node, reason),
     hours: hoursPerWeek,
     isGrave: i < 2,
   }));

@@ -1,3 +1,4 @@
+import { pickCountedQuantile } from "@/lib/statistics/quantile";
 import { addUnits, rateQuantiles, sectionWeeks } from "./rates";
 import type { Figure, RunResult } from "./types";
 
@@ -13,4 +14,17 @@ export function percentile(result: RunResult, p: number, customerId?: string): F
     customerId === undefined ? -1 : tallies.shape.customers.findIndex((candidate) => candidate.id === customerId);
   if (customerId !== undefined && customer === -1) throw new RangeError(`no customer has the id "${customerId}"`);
   return rateQuantiles(sectionWeeks(addUnits(tallies, customer), options.targetFillRate), [p])[0];
+}
+
+/**
+ * Percentile of a buffer's level over the ends of regular days, units.
+ * @param p - 0..1.
+ * @throws RangeError on another p and on an unknown buffer.
+ */
+export function levelPercentile({ tallies }: RunResult, bufferId: string, p: number): number {
+  if (!(p >= 0 && p <= 1)) throw new RangeError(`p must be from 0 to 1, got ${p}`);
+  const buffer = tallies.shape.buffers.findIndex(({ id }) => id === bufferId);
+  if (buffer === -1) throw new RangeError(`no buffer has the id "${bufferId}"`);
+  const { levels, counts } = tallies.dayLevels[buffer];
+  return pickCountedQuantile(levels, counts, p);
 }

@@ -29,7 +29,8 @@ export function summarise(options: RunOptions, tallies: Tallies): RunResult {
 /** Sums over replications of a row of `Tallies.sums`, with the number of replications. */
 export type Sums = { row: Float64Array; nReplications: number };
 
-function sumSections(tallies: Tallies): Sectioned<Sums> {
+/** Rows of `Tallies.sums` added up, over all replications and in each section. */
+export function sumSections(tallies: Tallies): Sectioned<Sums> {
   const { count } = layoutColumns(tallies.shape);
   return computeSections(tallies.replications.length, (from, to) => {
     const row = new Float64Array(count);

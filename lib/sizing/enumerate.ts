@@ -1,4 +1,4 @@
-import { isBetter } from "./improve";
+import { isBetter } from "./is-better";
 import type { Levels } from "./problem";
 import type { Reading, Search } from "./runs";
 

@@ -1,11 +1,9 @@
 import type { RunResult } from "@/lib/simulation/types";
-import { composeSizes } from "./compose";
 import { enumerateSets, isSmall } from "./enumerate";
-import { improveSizes, isBetter } from "./improve";
-import { measureNeeds, type Needs } from "./needs";
-import { checkProblem, type Evaluate, type Levels, sizesOf, type SizingProblem, topLevels } from "./problem";
-import { type Checkpoint, createRuns, type Reading, type Runs, type Sample, type Search } from "./runs";
-import { countBad, countDue } from "./week-rates";
+import { findFirstSet } from "./first-sets";
+import { beginKnowledge, improveSizes } from "./improve";
+import { checkProblem, type Evaluate, placesOf, sizesOf, type SizingProblem, topLevels } from "./problem";
+import { type Checkpoint, createRuns, type Runs, type Sample, type Search } from "./runs";
 
 /** The set of sizes found for one accepted risk. */
 export type FrontierPoint = {
@@ -22,6 +20,8 @@ export type FrontierPoint = {
 export type SearchProgress = {
   /** Lines run so far. */
   evaluations: number;
+  /** How far the search has come, 0..1: an estimate, since nobody knows beforehand how many looks it takes. */
+  share: number;
   /** The cheapest set so far that keeps to the risk now looked at, over the search's weeks. */
   best: null | { acceptedRisk: number; sizes: Record<string, number>; risk: number; value: number };
   /** Points of the frontier that are done. */
@@ -29,14 +29,16 @@ export type SearchProgress = {
   checkpoint: Checkpoint;
 };
 
-/** Screening looks at this part of the replications, but at no fewer than `fewest`. */
-const screened = 1 / 4;
-const fewest = 20;
-/** Runs of all replications spent on looking round for one accepted risk, and on mending a set that was not confirmed. */
+/** Parts of the replications that moves are looked at over and that first sets are sorted by, and the fewest of each. */
+const lookedAt = { share: 1 / 4, fewest: 20 };
+const sortedBy = { share: 1 / 16, fewest: 10 };
+/** Runs of all replications spent on improving one set, and on mending one that was not confirmed. */
 const mostEffort = 40;
-const mendingEffort = 25;
+const mendingEffort = 8;
 /** Sets put to the unseen weeks at most for one accepted risk. */
 const mostConfirmed = 3;
+/** What one accepted risk takes in runs of all replications, about; only for saying how far a search has come. */
+const usualEffort = 56;
 
 /**
  * Finds the cheapest set of buffer sizes for each accepted risk, and confirms it on weeks that the search has not seen.
@@ -47,8 +49,8 @@ const mostConfirmed = 3;
  * that does about as well as the largest sizes, and `reached` is false.
  * @throws RangeError on a problem that cannot be searched.
  * @remarks Sample average approximation on common random numbers (A. J. Kleywegt, A. Shapiro and T. Homem-de-Mello,
- * SIAM Journal on Optimization 12 (2002) 479-502): weekly needs of each buffer, marginal analysis over them
- * (`composeSizes`), neighbourhood search (`improveSizes`); few sets are run through one by one. A set that fails on
+ * SIAM Journal on Optimization 12 (2002) 479-502): a first set from low levels and halvings (`findFirstSet`), then
+ * response curves and marginal risk for money (`improveSizes`); few sets are run through one by one. A set that fails on
  * unseen weeks is searched again at a risk lower by what it was off, so that the unseen weeks are looked at up to three
  * times.
  */
@@ -62,10 +64,10 @@ export async function findSizes(
   const { replications, seed } = problem;
   const whole: Sample = { seed, replications, firstReplication: 0 };
   const unseen: Sample = { ...whole, seed: `${seed}/unseen` };
-  const part: Sample = {
+  const partOf = ({ share, fewest }: { share: number; fewest: number }): Sample => ({
     ...whole,
-    replications: Math.min(replications, Math.max(fewest, Math.ceil(replications * screened))),
-  };
+    replications: Math.min(replications, Math.max(fewest, Math.ceil(replications * share))),
+  });
   const frontier: FrontierPoint[] = [];
   let acceptedRisk = problem.acceptedRisks[0];
   const describeBest = (): SearchProgress["best"] => {
@@ -74,26 +76,44 @@ export async function findSizes(
     const { levels, risk, value } = sound.reduce((best, other) => (other.value < best.value ? other : best));
     return { acceptedRisk, sizes: sizesOf(problem, levels), risk, value };
   };
+  let begun = 0;
+  const shareDone = () => {
+    const own = Math.min(0.98, (runs.effort() - begun) / usualEffort);
+    return Math.min(1, (frontier.length + own) / problem.acceptedRisks.length);
+  };
   const report = () =>
     onProgress?.({
       evaluations: runs.evaluations(),
+      share: shareDone(),
       best: describeBest(),
       frontier: [...frontier],
       checkpoint: runs.checkpoint(),
     });
   const runs: Runs = createRuns(problem, evaluate, report, signal, resume);
-  const search: Search = { problem, runs, tops: topLevels(problem), whole, part };
+  const search: Search = {
+    problem,
+    places: placesOf(
+      problem.line,
+      problem.buffers.map(({ id }) => id),
+    ),
+    runs,
+    tops: topLevels(problem),
+    whole,
+    part: partOf(lookedAt),
+    few: partOf(sortedBy),
+  };
 
   const [ample] = await runs.read([search.tops], whole);
-  const needs = isSmall(search) ? null : await measureNeeds(search);
+  const knowledge = beginKnowledge(search, ample);
   for (acceptedRisk of problem.acceptedRisks) {
+    begun = runs.effort();
     let accepted = Math.max(acceptedRisk, ample.risk);
-    const start = needs ? await composeStart(search, needs, accepted) : await enumerateSets(search, accepted);
-    let found = await improveSizes(search, start, accepted, mostEffort);
+    const start = await (isSmall(search) ? enumerateSets(search, accepted) : findFirstSet(search, ample, accepted));
+    let found = await improveSizes(search, start, accepted, mostEffort, knowledge);
     let confirmed = await runs.resultOf(found.levels, unseen);
     for (let i = 1; i < mostConfirmed && !reaches(confirmed, acceptedRisk) && ample.risk < acceptedRisk; i++) {
       accepted = Math.max(ample.risk, found.risk - (confirmed.summary.risk.value - acceptedRisk) - 1e-9);
-      const next = await improveSizes(search, found, accepted, mendingEffort);
+      const next = await improveSizes(search, found, accepted, mendingEffort, knowledge);
       if (next.levels === found.levels) break;
       found = next;
       confirmed = await runs.resultOf(found.levels, unseen);
@@ -111,26 +131,3 @@ export async function findSizes(
 }
 
 const reaches = (result: RunResult, acceptedRisk: number): boolean => result.summary.risk.value <= acceptedRisk;
-
-/** The cheapest of the sets composed from the weeks' needs that keeps to the accepted risk, over all weeks. */
-async function composeStart({ runs, whole }: Search, needs: Needs, accepted: number): Promise<Reading> {
-  const nDue = countDue(needs.ample.codes);
-  const most = Math.max(0, Math.floor(accepted * nDue) - countBad(needs.ample.codes));
-  const compose = (share: number): Levels => composeSizes(needs, Math.floor(share * most));
-  // A set just past the risk is soon mended, and may be far cheaper than the next one within it.
-  const near = accepted * 1.1;
-  let [low, high] = [0, 1];
-  let best: Reading | null = null;
-  for (const shares of [
-    [1, 0.75, 0.5, 0.25, 0],
-    [0.75, 0.5, 0.25],
-  ]) {
-    const asked = shares.map((share) => low + share * (high - low));
-    const readings = await runs.read(asked.map(compose), whole);
-    for (const reading of readings) if (!best || isBetter(reading, best, near)) best = reading;
-    const first = readings.findIndex(({ risk }) => risk <= near);
-    if (first <= 0) break;
-    [low, high] = [asked[first], asked[first - 1]];
-  }
-  return best!;
-}

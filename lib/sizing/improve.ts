@@ -1,166 +1,158 @@
-import { combineMoves, type Combination, describeMoves, type Move } from "./moves";
-import { type Levels, withLevel } from "./problem";
+import { type Choice, changeAt, chooseLevels } from "./choose-levels";
+import { type Curve, curveThrough, fitCurve, observe, type Observation, shareAt } from "./curve";
+import { isBetter } from "./is-better";
+import { withLevel } from "./problem";
 import type { Reading, Sample, Search } from "./runs";
-import { countDue } from "./week-rates";
 
-/** Part of its size by which a buffer is moved at first. */
-const firstStep = 0.08;
-/** Times that sets are composed anew after one look round. */
+/** Sets chosen from the curves of one look round, each from what the one before turned out. */
 const mostTries = 4;
-/** Single moves run in full where joint ones do not help. */
-const mostSingle = 3;
-/** Parts of the weeks over which moves that seem not to help are looked at before they are made shorter. */
-const mostJoined = 2;
 /** A set this close to the accepted risk leaves nothing worth another try; share of weeks. */
-const enough = 0.002;
+const enough = 0.001;
+/** A look moves a buffer so far that about so many weeks more turn bad, and by at most this part of its size. */
+const wantedChange = 0.006;
+const mostMoved = 0.25;
+/** Where looks are this much shorter than at first, the search has come to rest. */
+const shortest = 0.2;
+/** Relative doubt about observations one look old, and about older ones: the other buffers have moved since. */
+const doubts = [0, 0.3, 0.7];
+/** Share of bad weeks that a buffer is thought to answer for before anything is known of it. */
+const unknownShare = 0.002;
+
+/** What is known of each buffer's curve, from all looks so far; age in looks. */
+export type Knowledge = { likely: number[]; seen: (Observation & { age: number })[][] };
 
 /**
- * Looks round a set of sizes and moves to a better one while there is one: each buffer a step down and a step up over a
- * part of the weeks, the most promising moves together over all of them.
+ * @param ample - The run with all buffers at their top: how far the low levels of purchased stock spread says how fast
+ * shortage grows as its size falls.
+ */
+export function beginKnowledge({ problem, places, tops }: Search, ample: Reading): Knowledge {
+  const likely = tops.map((top, b) => {
+    if (places[b] !== "bought") return 6 / Math.max(6, top);
+    const [, low, , , high] = ample.lows[b];
+    return Math.log(16) / Math.max(0.5, (high - low) / problem.buffers[b].step);
+  });
+  return { likely, seen: tops.map(() => []) };
+}
+
+/**
+ * Improves a set of sizes: looks at each buffer a step down over a part of the weeks, fits a curve of risk to each, sets
+ * all of them at once so that marginal risk for money is alike, and runs the set over all weeks; so again from there.
  * @param accepted - Share of weeks that may be bad.
  * @param mostEffort - Runs of all replications after which no further look round is begun.
- * @returns The cheapest set found that keeps to the accepted risk; where none does, the one of the least risk.
- * @remarks Neighbourhood search on a fixed sample of weeks, as in H. Wang, R. Pasupathy and B. W. Schmeiser,
- * Integer-ordered simulation optimization using R-SPLINE, ACM TOMACS 23 (2013) 17.
+ * @returns The best set known that keeps to the accepted risk; where none does, the one of the least risk.
+ * @remarks Sequential response surfaces with a trust region (K.-H. Chang, L. J. Hong and H. Wan, Stochastic trust-region
+ * response-surface method, INFORMS Journal on Computing 25 (2013) 230-243), here a curve for each buffer in place of a
+ * polynomial, since shortage falls off nearly exponentially with stock.
  */
 export async function improveSizes(
   search: Search,
   start: Reading,
   accepted: number,
   mostEffort: number,
+  knowledge: Knowledge,
 ): Promise<Reading> {
   const { problem, runs, whole, part } = search;
   const findBest = () =>
     runs.known(whole).reduce((one, other) => (isBetter(other, one, accepted) ? other : one), start);
-  let at = start;
-  // Each look round is at other weeks, so that none of them is fitted to for long.
-  const nParts = Math.floor(problem.replications / part.replications);
-  const partOf = (round: number): Sample => ({
-    ...part,
-    firstReplication: ((round + 1) % nParts) * part.replications,
-  });
-  const steps = problem.buffers.map(({ min, step }, b) =>
-    Math.max(1, Math.round((firstStep * (min + start.levels[b] * step)) / step)),
-  );
+  let looked = part.replications;
   const end = runs.effort() + mostEffort;
-  let seen: Look | null = null;
-  for (let round = 0; runs.effort() < end; round++) {
-    const look = await lookRound(search, at.levels, steps, partOf(round));
-    seen = seen ? joinLooks(seen, look) : look;
-    const { tried, price } = await tryMoves(search, seen, at, accepted);
-    const best = findBest();
-    const next = pickBase([at, ...tried], accepted, price * seen.nDue);
-    if (next !== at) {
-      // Where a whole step was right, the next one may be longer.
-      steps.forEach((step, b) => {
-        if (Math.abs(next.levels[b] - at.levels[b]) >= step) steps[b] = 2 * step;
-      });
-      at = next;
-    } else if (seen.nParts < Math.min(nParts, mostJoined)) continue;
-    else if (at !== best) at = best;
-    else if (steps.every((step) => step === 1)) break;
-    else steps.forEach((step, b) => (steps[b] = Math.max(1, step >> 1)));
-    seen = null;
+  let at = start;
+  let trust = 1;
+  for (let round = 0; runs.effort() < end && trust > shortest; round++) {
+    // Each look round is at other weeks, so that none of them is fitted to for long.
+    const nParts = Math.floor(problem.replications / looked);
+    const sample: Sample = { ...whole, replications: looked, firstReplication: (round % nParts) * looked };
+    const choices = await lookRound(search, at, sample, trust, knowledge);
+    const { tried, price } = await tryLevels(search, choices, at, accepted);
+    // Beyond the accepted risk a set costs more than mending it would: a set a little too risky is often a better
+    // place to go on from than a dear one within the risk.
+    const merit = ({ value, risk }: Reading) => value + 1.5 * price * Math.max(0, risk - accepted);
+    const next = [findBest(), ...tried].reduce((one, other) => (merit(other) < merit(one) ? other : one), at);
+    if (next === at) trust /= 2;
+    else at = next;
+    if (trust <= shortest && 2 * looked <= problem.replications) {
+      // What fewer weeks can tell is used up.
+      looked *= 2;
+      trust = 0.5;
+    }
   }
   return findBest();
 }
 
-/**
- * The set to look round next: the one of the least objective, where risk beyond the accepted one is priced somewhat above
- * what it costs to mend. A set a little too risky is often a better place to go on from than a dear one within the risk.
- * @param price - Of a share of weeks, in the objective; 0: unknown.
- */
-function pickBase(sets: readonly Reading[], accepted: number, price: number): Reading {
-  const merit = ({ value, risk }: Reading) => value + 1.5 * price * Math.max(0, risk - accepted);
-  return sets.reduce((one, other) =>
-    price > 0 ? (merit(other) < merit(one) ? other : one) : isBetter(other, one, accepted) ? other : one,
-  );
-}
-
-/** Moves of each buffer, as runs over one or several parts of the weeks show them. */
-type Look = { moves: Move[]; nParts: number; nWeeks: number; nDue: number };
-
+/** Runs each buffer a step down (up from its least), and says what is known of all of them then. */
 async function lookRound(
   { problem, runs, tops }: Search,
-  levels: Levels,
-  steps: readonly number[],
-  part: Sample,
-): Promise<Look> {
-  const [from, ...moved] = await runs.read([levels, ...neighbours(levels, steps, tops)], part);
-  const moves = moved.flatMap((to) => {
-    const b = to.levels.findIndex((level, i) => level !== from.levels[i]);
-    return describeMoves(from, to, b, problem.targetFillRate);
+  at: Reading,
+  sample: Sample,
+  trust: number,
+  { likely, seen }: Knowledge,
+): Promise<Choice[]> {
+  const steps = tops.map((_, b) => {
+    const level = at.levels[b];
+    const curve = seen[b].length > 0 ? fitSeen(seen[b], likely[b]) : curveThrough(level, unknownShare, likely[b]);
+    const { min, step } = problem.buffers[b];
+    const wanted = Math.log1p((wantedChange * trust) / shareAt(curve, level)) / curve.k;
+    return Math.max(1, Math.round(Math.min(wanted, mostMoved * trust * (level + min / step))));
   });
-  return { moves, nParts: 1, nWeeks: from.codes.length, nDue: countDue(from.codes) };
+  const moves = tops.flatMap((top, b) => {
+    const level = at.levels[b];
+    const to = level > 0 ? Math.max(0, level - steps[b]) : Math.min(top, steps[b]);
+    return to === level ? [] : [{ b, levels: withLevel(at.levels, b, to) }];
+  });
+  const [from, ...moved] = await runs.read([at.levels, ...moves.map(({ levels }) => levels)], sample);
+  const costs = tops.map(() => 0);
+  for (const own of seen) for (const observation of own) observation.age++;
+  moves.forEach(({ b }, i) => {
+    seen[b].push({ ...observe(from, moved[i], b), age: 0 });
+    costs[b] = (moved[i].value - from.value) / (moved[i].levels[b] - from.levels[b]);
+  });
+  return tops.map((top, b): Choice => {
+    const curve = seen[b].length > 0 ? fitSeen(seen[b], likely[b]) : curveThrough(0, unknownShare, likely[b]);
+    const level = at.levels[b];
+    // Down no further than was looked at: what lies beyond may fall off a cliff that the curve does not know.
+    const lowest = Math.max(0, level - steps[b]);
+    const reach = Math.min(2 * steps[b], Math.max(steps[b], Math.round(trust / curve.k)));
+    return { curve, cost: costs[b], from: level, lowest, highest: Math.min(top, level + reach) };
+  });
 }
 
-/** Looks at the same moves from the same sizes over different weeks. */
-function joinLooks(one: Look, other: Look): Look {
-  const moves = one.moves.map((move, i): Move => {
-    const { gain, lost, won } = other.moves[i];
-    const later = (weeks: number[]) => weeks.map((w) => w + one.nWeeks);
-    return {
-      ...move,
-      gain: (one.nParts * move.gain + other.nParts * gain) / (one.nParts + other.nParts),
-      lost: [...move.lost, ...later(lost)],
-      won: [...move.won, ...later(won)],
-    };
+function fitSeen(seen: Knowledge["seen"][number], likely: number): Curve {
+  const weighed = seen.map(({ age, ...observation }) => {
+    const doubt = doubts[Math.min(age, doubts.length - 1)] * observation.change;
+    return { ...observation, variance: observation.variance + doubt * doubt };
   });
-  return {
-    moves,
-    nParts: one.nParts + other.nParts,
-    nWeeks: one.nWeeks + other.nWeeks,
-    nDue: one.nDue + other.nDue,
-  };
+  return fitCurve(weighed, likely);
 }
 
-/**
- * Runs sets composed of moves over all weeks. What they turn out worse than the moves alone promised is allowed for in
- * the next ones, by halving the bracket; where joint moves do not help, the best single ones are tried.
- */
-async function tryMoves(
+/** Runs the sets that the curves suggest over all weeks, allowing in each for what the ones before turned out worse. */
+async function tryLevels(
   { runs, whole }: Search,
-  { moves, nWeeks, nDue }: Look,
+  choices: readonly Choice[],
   base: Reading,
   accepted: number,
 ): Promise<{ tried: Reading[]; price: number }> {
-  const setOf = ({ moves: set }: Combination): Levels =>
-    set.reduce<Levels>((levels, { b, by }) => withLevel(levels, b, levels[b] + by), base.levels);
-  const combine = (allowance: number) =>
-    combineMoves(moves, nWeeks, Math.floor((accepted - base.risk - allowance) * nDue + 1e-6));
   const tried: Reading[] = [];
-  const { single, price } = combine(0);
+  const room = accepted - base.risk;
+  let price = 0;
   let allowance = 0;
   // Allowances with which a set came out too risky, and within the risk.
   let [tooLittle, plenty] = [-Infinity, Infinity];
   for (let i = 0; i < mostTries; i++) {
-    const set = combine(allowance).joint.at(-1);
-    if (!set) break;
-    const [reading] = await runs.read([setOf(set)], whole);
+    const chosen = chooseLevels(choices, room - allowance);
+    price = chosen.price;
+    if (tried.some(({ levels }) => levels.join() === chosen.levels.join())) break;
+    const [reading] = await runs.read([chosen.levels], whole);
     tried.push(reading);
-    const off = reading.risk - base.risk - set.change / nDue;
     if (reading.risk > accepted) tooLittle = Math.max(tooLittle, allowance);
     else if (reading.risk > accepted - enough) break;
     else plenty = Math.min(plenty, allowance);
+    const predicted = changeAt(choices, chosen.levels);
+    const change = reading.risk - base.risk;
     const isBracketed = tooLittle > -Infinity && plenty < Infinity;
-    allowance = isBracketed ? (tooLittle + plenty) / 2 : off === allowance ? 1.5 * off : off;
+    if (isBracketed) allowance = (tooLittle + plenty) / 2;
+    // A rise that came out larger than foretold will do so in proportion; any other error is taken as it is.
+    else if (predicted > 0.01 && change > predicted) allowance = room - (room * predicted) / change;
+    else allowance = change - predicted;
   }
-  if (tried.some((reading) => isBetter(reading, base, accepted))) return { tried, price };
-  tried.push(...(await runs.read(single.slice(0, mostSingle).map(setOf), whole)));
   return { tried, price };
-}
-
-/** Keeping to the accepted risk comes first, then the objective. */
-export function isBetter(one: Reading, other: Reading, accepted: number): boolean {
-  const keeps = one.risk <= accepted;
-  if (keeps !== other.risk <= accepted) return keeps;
-  return keeps ? one.value < other.value : one.risk < other.risk;
-}
-
-function neighbours(levels: Levels, steps: readonly number[], tops: Levels): Levels[] {
-  return levels.flatMap((level, b) => {
-    const down = Math.max(0, level - steps[b]);
-    const up = Math.min(tops[b], level + steps[b]);
-    return [down, up].filter((other) => other !== level).map((other) => withLevel(levels, b, other));
-  });
 }

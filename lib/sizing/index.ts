@@ -1,3 +1,4 @@
+export { suggestBounds, refuseRange } from "./bounds";
 export { findSizes, type FrontierPoint, type SearchProgress } from "./find-sizes";
-export type { Evaluate, Objective, SizeRange, SizingProblem } from "./problem";
+export { type Evaluate, type Objective, placesOf, type SizeRange, type SizingProblem, withSizes } from "./problem";
 export type { Checkpoint } from "./runs";

@@ -49,6 +49,20 @@ export function checkProblem(problem: SizingProblem): void {
     throw new RangeError("the target fill rate must be above 0 and at most 1");
 }
 
+/** Where a buffer stands: purchased parts, between stations, or stock that stations fill and customers draw on. */
+export type Place = "bought" | "between" | "last";
+
+/** Places of some buffers of a line, in their order. */
+export function placesOf(line: Line, bufferIds: readonly string[]): Place[] {
+  const nodes = new Map(line.nodes.map((node) => [node.id, node]));
+  const drawn = new Set(line.links.flatMap(({ from, to }) => (nodes.get(to)?.kind === "customer" ? [from] : [])));
+  return bufferIds.map((id) => {
+    const node = nodes.get(id);
+    if (node?.kind === "buffer" && node.replenishment !== null) return "bought";
+    return drawn.has(id) ? "last" : "between";
+  });
+}
+
 /** Levels above which no buffer can go. */
 export function topLevels({ buffers }: SizingProblem): number[] {
   return buffers.map(({ min, max, step }) => Math.floor((max - min) / step));
@@ -64,5 +78,10 @@ export function sizesOf({ buffers }: SizingProblem, levels: Levels): Record<stri
 
 /** The line with one set of sizes. */
 export function lineWith(problem: SizingProblem, levels: Levels): Line {
-  return Object.entries(sizesOf(problem, levels)).reduce((line, [id, size]) => withSize(line, id, size), problem.line);
+  return withSizes(problem.line, sizesOf(problem, levels));
+}
+
+/** The line with the sizes named. */
+export function withSizes(line: Line, sizes: Record<string, number>): Line {
+  return Object.entries(sizes).reduce((sized, [id, size]) => withSize(sized, id, size), line);
 }

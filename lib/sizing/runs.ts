@@ -1,24 +1,25 @@
 import { digestLine } from "@/lib/line";
-import { engineVersion } from "@/lib/simulation";
+import { engineVersion, levelPercentile } from "@/lib/simulation";
 import type { RunResult } from "@/lib/simulation/types";
-import { type Evaluate, type Levels, lineWith, type SizingProblem } from "./problem";
-import { codeWeeks } from "./week-rates";
+import { type Evaluate, type Levels, lineWith, type Place, type SizingProblem } from "./problem";
+import { packBits, readBadWeeks, unpackBits, type BadWeeks } from "./week-bits";
 
 /** What the search needs to know of one run of one set of sizes. */
-export type Reading = {
+export type Reading = BadWeeks & {
   levels: Levels;
   /** Of the objective: money, or money a year. */
   value: number;
   risk: number;
-  /** See `codeWeeks`. */
-  codes: Uint8Array;
-  /** P10 of each buffer's level on hand, units. */
-  lows: number[];
+  /** Percentiles `lowShares` of each buffer's level on hand, units. */
+  lows: number[][];
 };
 
+/** Shares of days for which low levels are read: what lies on hand in all other days can be spared. */
+export const lowShares = [0.0005, 0.002, 0.008, 0.016, 0.032];
+
 /** Readings made so far, as plain JSON: a search started again with it asks for none of them twice. */
-export type Checkpoint = { format: "forebay.sizing/1"; problem: string; readings: Record<string, StoredReading> };
-type StoredReading = { value: number; risk: number; codes: string; lows: number[] };
+export type Checkpoint = { format: "forebay.sizing/2"; problem: string; readings: Record<string, StoredReading> };
+type StoredReading = Pick<Reading, "value" | "risk" | "nDue" | "lows"> & { bad: string };
 
 /** Weeks of some replications of one seed phrase. */
 export type Sample = { seed: string; replications: number; firstReplication: number };
@@ -26,11 +27,13 @@ export type Sample = { seed: string; replications: number; firstReplication: num
 /** What each step of a search works with. */
 export type Search = {
   problem: SizingProblem;
+  places: Place[];
   runs: Runs;
   tops: Levels;
-  /** All weeks of the search, and the part of them that screening looks at. */
+  /** All weeks of the search, the part of them at which moves are looked at, and the few that sort out first sets. */
   whole: Sample;
   part: Sample;
+  few: Sample;
 };
 
 export type Runs = {
@@ -58,7 +61,7 @@ export function createRuns(
   resume?: Checkpoint,
 ): Runs {
   const name = nameOf(problem);
-  if (resume && (resume.format !== "forebay.sizing/1" || resume.problem !== name))
+  if (resume && (resume.format !== "forebay.sizing/2" || resume.problem !== name))
     throw new RangeError("the checkpoint belongs to another problem or to another engine");
   const stored: Record<string, StoredReading> = { ...resume?.readings };
   const readings = new Map<string, Map<string, Reading>>();
@@ -85,8 +88,8 @@ export function createRuns(
     sets.forEach((levels, i) => {
       const reading = readResult(problem, levels, found[i]);
       ofSample(sample).set(levels.join(), reading);
-      const { value, risk, codes, lows } = reading;
-      stored[keyOf(levels, sample)] = { value, risk, codes: toBase64(codes), lows };
+      const { value, risk, nDue, lows, bad } = reading;
+      stored[keyOf(levels, sample)] = { value, risk, nDue, lows, bad: packBits(bad) };
     });
     onBatch();
     return found;
@@ -97,7 +100,7 @@ export function createRuns(
     const known = own.get(levels.join());
     const kept = stored[keyOf(levels, sample)];
     if (known || !kept) return known ?? null;
-    const reading = { ...kept, levels, codes: fromBase64(kept.codes) };
+    const reading = { ...kept, levels, bad: unpackBits(kept.bad, sample.replications * problem.weeks) };
     own.set(levels.join(), reading);
     return reading;
   }
@@ -121,7 +124,7 @@ export function createRuns(
     },
     evaluations: () => nEvaluations,
     effort: () => effort,
-    checkpoint: () => ({ format: "forebay.sizing/1", problem: name, readings: { ...stored } }),
+    checkpoint: () => ({ format: "forebay.sizing/2", problem: name, readings: { ...stored } }),
   };
 }
 
@@ -131,8 +134,8 @@ function readResult(problem: SizingProblem, levels: Levels, result: RunResult): 
     levels,
     value: problem.objective === "moneyTiedUp" ? moneyTiedUp.value : costPerYear.total.value,
     risk: risk.value,
-    codes: codeWeeks(result, problem.targetFillRate),
-    lows: problem.buffers.map(({ id }) => result.buffers[id].p10),
+    ...readBadWeeks(result, problem.targetFillRate),
+    lows: problem.buffers.map(({ id }) => lowShares.map((share) => levelPercentile(result, id, share))),
   };
 }
 
@@ -151,14 +154,4 @@ function nameOf({ line, buffers, targetFillRate, objective, seed, weeks, warmupW
     weeks,
     warmupWeeks,
   ]);
-}
-
-function toBase64(bytes: Uint8Array): string {
-  let text = "";
-  for (let i = 0; i < bytes.length; i += 0x8000) text += String.fromCharCode(...bytes.subarray(i, i + 0x8000));
-  return btoa(text);
-}
-
-function fromBase64(text: string): Uint8Array {
-  return Uint8Array.from(atob(text), (char) => char.charCodeAt(0));
 }

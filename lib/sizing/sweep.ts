@@ -1,5 +1,6 @@
 import { limits, sayCount } from "@/lib/line/limits";
 import type { Figure } from "@/lib/simulation/types";
+import { nearestRound } from "./bounds";
 
 export const mostSizes = 24;
 
@@ -42,14 +43,6 @@ export function suggestRange(size: number): { from: number; to: number; step: nu
   const step = nearestRound(size / 10);
   const from = Math.max(1, size - Math.min(4, Math.floor((size - 1) / step)) * step);
   return { from, to: size + 4 * step, step };
-}
-
-/** The round whole number closest to a value in ratio. */
-function nearestRound(value: number): number {
-  const power = 10 ** (String(Math.max(1, Math.floor(value))).length - 1);
-  const round = [1, 2, 2.5, 5, 10].map((m) => m * power).filter(Number.isInteger);
-  const distance = (step: number) => Math.max(step / value, value / step);
-  return round.reduce((best, step) => (distance(step) < distance(best) ? step : best));
 }
 
 export type SizeFigures = { size: number; gain: Figure | null; moneyTiedUp: Figure };

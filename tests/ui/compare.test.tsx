@@ -3,12 +3,11 @@ import { expect, it } from "vitest";
 import { SizeComparison } from "@/components/compare/size-comparison";
 import { SweepProvider } from "@/components/compare/sweep-store";
 import { ShareActionsContext } from "@/components/share/share-actions";
-import { pairedDifference } from "@/lib/client/paired";
 import type { SimulationClient } from "@/lib/client/simulation-client";
 import { setField } from "@/lib/line/edits";
 import type { Line } from "@/lib/line/types";
 import type { Role } from "@/lib/schema/roles";
-import { percentile, simulate } from "@/lib/simulation";
+import { pairedDifference, percentile, simulate } from "@/lib/simulation";
 import { withSize } from "@/lib/sizing/with-size";
 import {
   createActions,

@@ -2,11 +2,11 @@ import { describe, expect, it } from "vitest";
 import { readStrip } from "@/components/line/strip-reading";
 import { describePoints, describeTime, sayFigures } from "@/components/line/strip-text";
 import type { LineState, Reading } from "@/lib/client/line-state";
-import { moveFigure, pairedDifference } from "@/lib/client/paired";
+import { moveFigure } from "@/lib/client/paired";
 import example from "@/lib/line/example.json";
 import type { Line } from "@/lib/line/types";
 import { defaultOptions, type ReadingSummary } from "@/lib/schema/lines";
-import { percentile, simulate, type RunResult } from "@/lib/simulation";
+import { pairedDifference, percentile, simulate, type RunResult } from "@/lib/simulation";
 
 const { acceptedRisk: _, ...runOptions } = { ...defaultOptions, replications: 20, weeks: 10, warmupWeeks: 2 };
 const result = simulate(example as unknown as Line, runOptions);
@@ -72,14 +72,23 @@ describe("the words of the strip", () => {
 });
 
 describe("pairedDifference", () => {
-  const shifted = (by: number): RunResult => ({ ...result, fillRates: result.fillRates.map((rate) => rate + by) });
+  /** A hundred times the units, so that a point of fill rate is a whole number of them. */
+  const shifted = (points: number): RunResult => {
+    const { demand, onTime } = result.tallies;
+    const tallies = {
+      ...result.tallies,
+      demand: demand.map((units) => units * 100),
+      onTime: onTime.map((units, i) => units * 100 + points * demand[i]),
+    };
+    return { ...result, tallies };
+  };
 
   it("is nothing, with certainty, between a run and itself", () => {
     expect(pairedDifference(result, result, 0.1)).toEqual({ value: 0, halfWidth: 0 });
   });
 
   it("finds a shift of all weeks at once, without the luck that both runs share", () => {
-    const { value, halfWidth } = pairedDifference(shifted(0.02), result, 0.1);
+    const { value, halfWidth } = pairedDifference(shifted(2), result, 0.1);
     expect(value).toBeCloseTo(0.02, 6);
     expect(halfWidth).toBeLessThan(1e-6);
     expect(result.summary.p10.halfWidth).toBeGreaterThan(0.01);
@@ -96,7 +105,7 @@ describe("pairedDifference", () => {
   });
 
   it("shows no edit where the edit changes nothing, whatever the quick run came to", () => {
-    const full = { ...reading, result: shifted(-0.07), isCurrent: false };
+    const full = { ...reading, result: shifted(-7), isCurrent: false };
     const { edited, settled } = shown({ full, live: reading, liveBase: reading });
     expect(edited?.atRisk.value).toBeCloseTo(settled!.atRisk.value, 12);
     expect(edited).toMatchObject({ moneyTiedUp: 0, costPerYear: 0 });

@@ -1,115 +1,164 @@
 import { describe, expect, it } from "vitest";
-import { composeSizes } from "@/lib/sizing/compose";
-import { combineMoves, describeMoves, type Move } from "@/lib/sizing/moves";
-import type { Need, Needs } from "@/lib/sizing/needs";
+import { exampleLine } from "@/lib/line/example";
+import { nearestRound, refuseRange, suggestBounds } from "@/lib/sizing/bounds";
+import { changeAt, type Choice, chooseLevels } from "@/lib/sizing/choose-levels";
+import { curveThrough, fitCurve, observe, type Observation, shareAt } from "@/lib/sizing/curve";
+import { isBetter } from "@/lib/sizing/is-better";
+import { placesOf, withSizes } from "@/lib/sizing/problem";
 import type { Reading } from "@/lib/sizing/runs";
-import { codeWeeks, countBad, countDue, isBad, rateOf } from "@/lib/sizing/week-rates";
+import { packBits, readBadWeeks, unpackBits } from "@/lib/sizing/week-bits";
 import type { RunResult } from "@/lib/simulation";
 
 const resultOf = (rates: number[]) => ({ fillRates: Float32Array.from(rates) }) as unknown as RunResult;
-const readingOf = (levels: number[], value: number, rates: number[]): Reading => ({
+const readingOf = (levels: number[], bad: number[], value = 0): Reading => ({
   levels,
   value,
-  risk: 0,
-  codes: codeWeeks(resultOf(rates), 0.9),
+  risk: bad.reduce((sum, bit) => sum + bit, 0) / bad.length,
+  bad: Uint8Array.from(bad),
+  nDue: bad.length,
   lows: [],
 });
 
-describe("codes of weeks", () => {
-  it("keep exactly whether the target was met, and the rate to a hundredth", () => {
-    const rates = [0, 0.2, 0.5, 0.899, 0.9, 0.95, 1, Number.NaN];
-    const codes = codeWeeks(resultOf(rates), 0.9);
-    expect([...codes].map(isBad)).toEqual([true, true, true, true, false, false, false, false]);
-    expect(countBad(codes)).toBe(4);
-    expect(countDue(codes)).toBe(7);
-    rates.slice(0, 7).forEach((rate, w) => expect(Math.abs(rateOf(codes[w], 0.9) - rate)).toBeLessThan(0.01));
+describe("bad weeks", () => {
+  it("are those below the target; weeks without demand are neither", () => {
+    const { bad, nDue } = readBadWeeks(resultOf([0, 0.5, 0.899, 0.9, 0.95, 1, Number.NaN]), 0.9);
+    expect([...bad]).toEqual([1, 1, 1, 0, 0, 0, 0]);
+    expect(nDue).toBe(6);
   });
 
-  it("count a week on the target as good where single precision rounds it down", () => {
+  it("do not count a week on the target where single precision rounds it down", () => {
     expect(Math.fround(0.95)).toBeLessThan(0.95);
-    expect(countBad(codeWeeks(resultOf([0.95]), 0.95))).toBe(0);
+    expect([...readBadWeeks(resultOf([0.95]), 0.95).bad]).toEqual([0]);
+  });
+
+  it.each([0, 1, 7, 8, 9, 1000])("survive packing, %d of them", (n) => {
+    const bits = Uint8Array.from({ length: n }, (_, i) => ((i * 7919) % 3) & 1);
+    expect([...unpackBits(packBits(bits), n)]).toEqual([...bits]);
   });
 });
 
-/** Two buffers of levels 0..4 at 10 and 3 a level; what each of 12 weeks needs of them. */
-function needsOf(first: number[], second: number[]): Needs {
-  const need = (levels: number[], price: number): Need => ({
-    floor: 0,
-    top: 4,
-    levels: Int32Array.from(levels),
-    savings: Float64Array.from([4, 3, 2, 1, 0], (steps) => steps * price),
-  });
-  const ample = readingOf([4, 4], 52, new Array<number>(first.length).fill(1));
-  return {
-    ample,
-    byBuffer: [need(first, 10), need(second, 3)],
-  };
-}
-
-describe("composeSizes", () => {
-  const first = [0, 0, 0, 0, 1, 1, 1, 2, 2, 3, 4, 4];
-  const second = [4, 3, 2, 2, 1, 1, 0, 0, 1, 0, 4, 0];
-  const nBad = (levels: readonly number[]) =>
-    first.filter((need, w) => need > levels[0] || second[w] > levels[1]).length;
-  const money = ([a, b]: readonly number[]) => 10 * a + 3 * b;
-
-  it.each([0, 1, 2, 3, 4, 6, 9, 12])("keeps to %d bad weeks at the least money, as enumerated", (most) => {
-    const levels = composeSizes(needsOf(first, second), most);
-    expect(nBad(levels)).toBeLessThanOrEqual(most);
-    const all = [0, 1, 2, 3, 4].flatMap((a) => [0, 1, 2, 3, 4].map((b) => [a, b]));
-    const least = Math.min(...all.filter((set) => nBad(set) <= most).map(money));
-    // Marginal analysis takes the best step each time; with two buffers it is at most one step of the cheap one off.
-    expect(money(levels)).toBeLessThanOrEqual(least + 3);
+describe("observe", () => {
+  it("counts weeks lost and won over all weeks with demand", () => {
+    const seen = observe(
+      readingOf([5, 3], [0, 0, 0, 1, 1, 0, 0, 0, 0, 0]),
+      readingOf([5, 1], [1, 1, 0, 0, 1, 1, 0, 0, 0, 0]),
+      1,
+    );
+    expect(seen).toEqual({ level: 3, by: -2, change: 0.2, variance: expect.closeTo(0.05, 12) });
   });
 });
 
-describe("moves", () => {
-  it("read off where on the way a week turns", () => {
-    const from = readingOf([6, 2], 100, [1, 0.99, 0.5, Number.NaN]);
-    const to = readingOf([0, 2], 40, [0.45, 0.89, 0.95, 0.2]);
-    const moves = describeMoves(from, to, 0, 0.9);
-    expect(moves.map(({ by, gain }) => [by, Math.round(gain)])).toEqual([
-      [-6, 60],
-      [-4, 40],
-      [-2, 20],
-    ]);
-    // The first week crosses 0.9 after a fifth of the way, the second only near its end, the third gets better.
-    expect(moves.map(({ lost }) => lost)).toEqual([[0, 1], [0], [0]]);
-    expect(moves[0].won).toEqual([2]);
-  });
-
-  const move = (b: number, by: number, gain: number, lost: number[], won: number[] = []): Move => ({
-    b,
+describe("fitCurve", () => {
+  const truth = curveThrough(10, 0.02, 0.3);
+  const lookAt = (level: number, by: number): Observation => ({
+    level,
     by,
-    gain,
-    lost,
-    won,
+    change: shareAt(truth, level + by) - shareAt(truth, level),
+    variance: 1e-8,
   });
 
-  it("join so that the objective falls and no more weeks are lost than there is room for", () => {
-    const moves = [
-      move(0, -1, 50, [1, 2, 3]),
-      move(1, -1, 20, [3, 4]),
-      move(2, 1, -10, [], [8, 9]),
-      move(3, -1, 5, [5, 6, 7]),
-    ];
-    const { joint, single } = combineMoves(moves, 10, 2);
-    const last = joint.at(-1)!;
-    expect(new Set(last.moves.map(({ b }) => b))).toEqual(new Set([0, 1, 2]));
-    // Weeks 1 to 4 are lost, 3 once for both, 8 and 9 are won.
-    expect(last.change).toBe(2);
-    expect(single[0].moves.map(({ b }) => b)).toEqual([0, 2]);
+  it("finds the curve that made exact observations, whatever was likely", () => {
+    for (const likely of [0.15, 0.3, 0.6]) {
+      const curve = fitCurve([lookAt(10, -3), lookAt(14, -4), lookAt(6, 2)], likely);
+      expect(curve.k / 0.3).toBeGreaterThan(0.9);
+      expect(curve.k / 0.3).toBeLessThan(1.1);
+      expect(shareAt(curve, 8) / shareAt(truth, 8)).toBeCloseTo(1, 1);
+    }
   });
 
-  it("mend where too many weeks are bad, at the least cost", () => {
-    const moves = [move(0, 1, -30, [], [1, 2]), move(1, 1, -5, [], [2, 3]), move(2, -1, 40, [4])];
-    const gainOf = (most: number) => {
-      const { joint } = combineMoves(moves, 5, most);
-      expect(joint.every(({ change }) => change <= most)).toBe(true);
-      return joint[0].moves.reduce((sum, { gain }) => sum + gain, 0);
-    };
-    expect(gainOf(-1)).toBe(35);
-    expect(gainOf(-2)).toBe(5);
-    expect(gainOf(-3)).toBe(-35);
+  it("keeps to what is likely where observations say nothing of the rate, and meets what they say of the share", () => {
+    const curve = fitCurve([lookAt(10, -1)], 0.2);
+    expect(curve.k).toBeCloseTo(0.2, 6);
+    expect(shareAt(curve, 9) - shareAt(curve, 10)).toBeCloseTo(lookAt(10, -1).change, 9);
+  });
+
+  it("takes a move that did nothing, or good, for one without risk", () => {
+    for (const change of [0, -0.01]) {
+      const curve = fitCurve([{ level: 10, by: -2, change, variance: 1e-6 }], 0.2);
+      expect(shareAt(curve, 10)).toBeLessThan(1e-9);
+    }
+  });
+});
+
+describe("chooseLevels", () => {
+  const choices: Choice[] = [
+    { curve: curveThrough(10, 0.03, 0.4), cost: 10, from: 10, lowest: 4, highest: 16 },
+    { curve: curveThrough(8, 0.01, 0.2), cost: 3, from: 8, lowest: 2, highest: 14 },
+    { curve: curveThrough(5, 0.02, 0.7), cost: 7, from: 5, lowest: 1, highest: 9 },
+  ];
+  const costOf = (levels: readonly number[]) => levels.reduce((sum, level, i) => sum + choices[i].cost * level, 0);
+  const range = ({ lowest, highest }: Choice) => Array.from({ length: highest - lowest + 1 }, (_, i) => lowest + i);
+  const all = range(choices[0]).flatMap((a) =>
+    range(choices[1]).flatMap((b) => range(choices[2]).map((c) => [a, b, c])),
+  );
+
+  it.each([-0.04, -0.02, 0, 0.03, 0.1])("is the cheapest set at its own risk, as enumerated, with room %d", (room) => {
+    const { levels, price } = chooseLevels(choices, room);
+    const change = changeAt(choices, levels);
+    expect(change).toBeLessThanOrEqual(room);
+    const least = Math.min(...all.filter((set) => changeAt(choices, set) <= change + 1e-12).map(costOf));
+    expect(costOf(levels)).toBeCloseTo(least, 9);
+    // What whole levels leave of the room is less than one more step of any buffer would take.
+    const best = Math.min(...all.filter((set) => changeAt(choices, set) <= room).map(costOf));
+    expect(costOf(levels) - best).toBeLessThanOrEqual(Math.max(...choices.map(({ cost }) => cost)));
+    expect(price).toBeGreaterThan(0);
+  });
+
+  it("goes to the levels of least risk where there is not room enough, and down to the lowest where there is plenty", () => {
+    expect(chooseLevels(choices, -1).levels).toEqual([16, 14, 9]);
+    expect(chooseLevels(choices, 1).levels).toEqual([4, 2, 1]);
+  });
+
+  it("raises a buffer that costs nothing or less", () => {
+    expect(chooseLevels([{ ...choices[0], cost: -1 }], 1).levels).toEqual([16]);
+  });
+});
+
+describe("isBetter", () => {
+  const at = (risk: number, value: number) => ({ ...readingOf([], [0]), risk, value });
+  it("puts the accepted risk first, then the objective; beyond the risk, the less risky", () => {
+    expect(isBetter(at(0.1, 90), at(0.05, 100), 0.1)).toBe(true);
+    expect(isBetter(at(0.11, 50), at(0.05, 100), 0.1)).toBe(false);
+    expect(isBetter(at(0.11, 100), at(0.2, 50), 0.1)).toBe(true);
+  });
+});
+
+describe("ranges", () => {
+  it("tell purchased stock, stock between stations and the stock customers draw on apart", () => {
+    expect(placesOf(exampleLine, ["lam", "stator", "unit", "fg"])).toEqual(["bought", "between", "between", "last"]);
+  });
+
+  it("are suggested about today's sizes in round steps, with both ends on a step", () => {
+    const bounds = suggestBounds(exampleLine);
+    expect(bounds).toHaveLength(14);
+    for (const { id, min, max, step } of bounds) {
+      const node = exampleLine.nodes.find((one) => one.id === id);
+      const size = node?.kind === "buffer" ? node.size : NaN;
+      expect(min).toBeGreaterThanOrEqual(1);
+      expect(min).toBeLessThan(size);
+      expect(max).toBeGreaterThan(size);
+      expect((max - min) % step).toBe(0);
+      expect(nearestRound(step)).toBe(step);
+      expect((max - min) / step).toBeGreaterThan(30);
+      expect((max - min) / step).toBeLessThan(130);
+      expect(refuseRange({ min, max, step })).toBeNull();
+    }
+  });
+
+  it("hold for a buffer of one place", () => {
+    const [range] = suggestBounds({
+      ...withSizes(exampleLine, { stator: 1 }),
+      nodes: withSizes(exampleLine, { stator: 1 }).nodes.filter(({ id }) => id === "stator"),
+    });
+    expect(range).toEqual({ id: "stator", min: 1, max: 3, step: 1 });
+  });
+
+  it.each([
+    [{ min: null, max: 5, step: 1 }, /^Type/],
+    [{ min: 0, max: 5, step: 1 }, /^Sizes and steps are whole/],
+    [{ min: 1, max: 5, step: 1.5 }, /^Sizes and steps are whole/],
+    [{ min: 6, max: 5, step: 1 }, /above the largest/],
+  ])("are refused with a reason: %o", (range, reason) => {
+    expect(refuseRange(range)).toMatch(reason);
   });
 });

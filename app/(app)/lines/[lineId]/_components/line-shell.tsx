@@ -7,6 +7,7 @@ import { LineMasthead } from "@/components/line/line-masthead";
 import { ResultStrip } from "@/components/line/result-strip";
 import { ScenarioBar } from "@/components/line/scenario-bar";
 import { StaleDialog } from "@/components/line/stale-dialog";
+import { SizingProvider } from "@/components/sizing/sizing-store";
 import { ShareActionsContext } from "@/components/share/share-actions";
 import { LineProvider } from "@/lib/client/line-provider";
 import { SimulationProvider } from "@/lib/client/use-simulation";
@@ -46,21 +47,23 @@ export function LineShell({ line, initial, userName, children }: Props) {
       >
         <ShareActionsContext value={shareActions}>
           <SweepProvider>
-            <BarSlots>
-              <div className="flex h-dvh flex-col overflow-hidden print:block print:h-auto print:overflow-visible">
-                <LineMasthead userName={userName} />
-                <ScenarioBar />
-                <main
-                  id="main"
-                  tabIndex={0}
-                  className="relative flex min-h-0 flex-1 flex-col overflow-auto focus-visible:shadow-[inset_0_0_0_2px_var(--water-600)] print:overflow-visible"
-                >
-                  {children}
-                </main>
-                <ResultStrip />
-              </div>
-              <StaleDialog />
-            </BarSlots>
+            <SizingProvider>
+              <BarSlots>
+                <div className="flex h-dvh flex-col overflow-hidden print:block print:h-auto print:overflow-visible">
+                  <LineMasthead userName={userName} />
+                  <ScenarioBar />
+                  <main
+                    id="main"
+                    tabIndex={0}
+                    className="relative flex min-h-0 flex-1 flex-col overflow-auto focus-visible:shadow-[inset_0_0_0_2px_var(--water-600)] print:overflow-visible"
+                  >
+                    {children}
+                  </main>
+                  <ResultStrip />
+                </div>
+                <StaleDialog />
+              </BarSlots>
+            </SizingProvider>
           </SweepProvider>
         </ShareActionsContext>
       </LineProvider>

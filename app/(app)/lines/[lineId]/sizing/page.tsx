@@ -1,0 +1,5 @@
+import { SizingView } from "@/components/sizing/sizing-view";
+
+export default function SizingPage() {
+  return <SizingView />;
+}
