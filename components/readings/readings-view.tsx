@@ -9,6 +9,7 @@ import { Pick } from "@/components/ui/pick";
 import { type Reading, useLine } from "@/lib/client/line-state";
 import { formatChosenPercent } from "@/lib/format";
 import { describeAbout } from "@/lib/line/describe-fault";
+import { BadWeek } from "./bad-week";
 import { CauseList } from "./cause-list";
 import { CostList } from "./cost-list";
 import { CustomerTable } from "./customer-table";
@@ -84,6 +85,9 @@ function Figures({ reading, isCurrent }: { reading: Reading; isCurrent: boolean 
           <CustomerTable result={result} document={document} acceptedRisk={options.acceptedRisk} />
           <RunAgain />
         </div>
+      </div>
+      <div className="mt-6 min-w-0 border-t border-ink pt-4">
+        <BadWeek reading={reading} />
       </div>
     </div>
   );

@@ -34,13 +34,16 @@ export type TracedWeek = {
   causes: { node: string; reason: CauseReason; hours: number }[];
 };
 
+/** One type for each kind, so that a kind picks out its own. */
+type Kinds<K, Fields> = K extends string ? { kind: K } & Fields : never;
+
 /**
  * Something that happened. `node` is whom it happened to, null for the whole line.
  * `tick`: index of the traced tick in which it happened; what happens at a day's start has the day's first tick.
  * `day`: regular working day from the first traced one; overtime counts to the day before it.
  */
 export type TraceEvent = { tick: number; day: number } & (
-  | { kind: "disrupted" | "recovered"; node: string; isCarried: boolean }
+  | Kinds<"disrupted" | "recovered", { node: string; isCarried: boolean }>
   /** Not there on its expected day. `plannedDay` may be that day where a disruption holds the delivery up. */
   | { kind: "overdue"; node: string; buffer: string; units: number; expectedDay: number; plannedDay: number }
   /** `units` of which `rejected` failed inspection; `lateDays` < 0 is early. */
@@ -56,8 +59,8 @@ export type TraceEvent = { tick: number; day: number } & (
   /** A whole lot turned away. */
   | { kind: "refused"; node: string; buffer: string; units: number; expectedDay: number; lateDays: number }
   /** `dry`, `stopped` and `short` begin a spell of so many ticks, the others end one; a spell that lasts to the end of the trace has no end. */
-  | { kind: "dry" | "restocked" | "stopped" | "running"; node: string; ticks: number; isCarried: boolean }
-  | { kind: "short" | "supplied"; node: string; buffer: string; ticks: number; isCarried: boolean }
+  | Kinds<"dry" | "restocked" | "stopped" | "running", { node: string; ticks: number; isCarried: boolean }>
+  | Kinds<"short" | "supplied", { node: string; buffer: string; ticks: number; isCarried: boolean }>
   | { kind: "overtime"; node: null; ticks: number }
   /** Units owed at the week's end, in the week's last tick. `isLost`: cancelled there. */
   | { kind: "backlog"; node: string; units: number; isLost: boolean }
