@@ -17,8 +17,8 @@ export type Job = { rank: number; next(): Call | null; fail(error: Error): void 
 
 type Slot = {
   worker: WorkerHandle | null;
-  /** The job whose line the worker holds. */
-  loaded: Job | null;
+  /** The line that the worker holds. */
+  loaded: Line | null;
   busy: { job: Job; since: number; giveUp(error: Error): void } | null;
 };
 
@@ -71,7 +71,7 @@ export function createCrew(
     const given = new Promise<never>((_, reject) => (task.giveUp = reject));
     slot.busy = task;
     try {
-      const answer = await Promise.race([given, perform(slot, job, call, task.giveUp)]);
+      const answer = await Promise.race([given, perform(slot, call, task.giveUp)]);
       if (slot.busy !== task) return;
       slot.busy = null;
       if (!jobs.includes(job)) return;
@@ -88,12 +88,12 @@ export function createCrew(
     }
   }
 
-  async function perform(slot: Slot, job: Job, call: Call, giveUp: (error: Error) => void): Promise<Answer<unknown>> {
+  async function perform(slot: Slot, call: Call, giveUp: (error: Error) => void): Promise<Answer<unknown>> {
     const worker = (slot.worker ??= startWorker());
     worker.onFailure((message) => giveUp(new Error(message)));
-    if (slot.loaded !== job) {
+    if (slot.loaded !== call.line) {
       await within(startLimitMs, worker.api.load(call.line), () => new NotStarted("it did not start"));
-      slot.loaded = job;
+      slot.loaded = call.line;
     }
     const limit = call.expectedMs === null ? Infinity : Math.max(leastLimitMs, patience * call.expectedMs);
     return within(limit, call.send(worker.api), () => new Error("it stopped answering"));

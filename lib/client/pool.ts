@@ -77,6 +77,13 @@ export function createSimulationClient(settings: PoolSettings = {}): SimulationC
         });
       });
     },
+    async runMany(lines, options, hooks = {}) {
+      const checked = checkOptions(options);
+      if (lines.length === 0) return [];
+      return start<RunResult[]>(hooks, ({ resolve, reject }) =>
+        createLinesJob(lines, checked, rankOf(hooks), resolve, reject),
+      );
+    },
     async lowestLevels(line, options, bufferId, hooks = {}) {
       const checked = checkOptions(options);
       const base = checked.firstReplication ?? 0;
@@ -125,6 +132,36 @@ export function createSimulationClient(settings: PoolSettings = {}): SimulationC
 
 const ranks: Record<Priority, number> = { full: 0, live: 1, search: 2 };
 const rankOf = ({ priority = "full" }: RunHooks): number => ranks[priority];
+
+/** One call a line. */
+function createLinesJob(
+  lines: readonly Line[],
+  options: RunOptions,
+  rank: number,
+  resolve: (results: RunResult[]) => void,
+  fail: (error: Error) => void,
+): Job {
+  const results: RunResult[] = [];
+  let nHandedOut = 0;
+  let nDone = 0;
+  return {
+    rank,
+    fail,
+    next() {
+      if (nHandedOut >= lines.length) return null;
+      const i = nHandedOut++;
+      return {
+        line: lines[i],
+        expectedMs: null,
+        send: (api) => api.simulate(options),
+        receive(value) {
+          results[i] = value as RunResult;
+          if (++nDone === lines.length) resolve(results);
+        },
+      };
+    },
+  };
+}
 
 /** Collects the parts of a run and has them merged by a worker, so that the page never stands still for it. */
 function createGathering(

@@ -19,6 +19,8 @@ export type LowestLevels = { nReplications: number; nWeeks: number; lowest: Int3
 export interface SimulationClient {
   readonly nWorkers: number;
   run(line: Line, options: RunOptions, hooks?: RunHooks): Promise<RunResult>;
+  /** Runs several lines, each as a whole on one worker; results in the order of the lines. For many short runs. */
+  runMany(lines: readonly Line[], options: RunOptions, hooks?: Omit<RunHooks, "onProgress">): Promise<RunResult[]>;
   lowestLevels(line: Line, options: RunOptions, bufferId: string, hooks?: RunHooks): Promise<LowestLevels>;
   /** One week of one replication tick by tick, run again from its seed; `onProgress` is never called. */
   traceWeek(line: Line, options: RunOptions, replication: number, week: number, hooks?: RunHooks): Promise<WeekTrace>;

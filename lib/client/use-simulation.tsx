@@ -28,6 +28,7 @@ function createLazyClient(): SimulationClient {
       return get().nWorkers;
     },
     run: (...args) => get().run(...args),
+    runMany: (...args) => get().runMany(...args),
     lowestLevels: (...args) => get().lowestLevels(...args),
     traceWeek: (...args) => get().traceWeek(...args),
     close: () => client?.close(),

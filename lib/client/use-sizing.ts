@@ -84,8 +84,14 @@ export function orderRisks(asked: number): number[] {
   return [asked, ...others.sort((a, b) => distance(a) - distance(b))];
 }
 
-/** Runs lines on the page's workers, all at once; whatever the user runs meanwhile goes first. */
+/**
+ * Runs lines on the page's workers; whatever the user runs meanwhile goes first. A few lines are cut into blocks so that
+ * all workers have work, many are handed out whole.
+ */
 export function createEvaluate(client: SimulationClient, signal: AbortSignal): Evaluate {
+  const hooks = { signal, priority: "search" } as const;
   return (lines: Line[], options: RunOptions) =>
-    Promise.all(lines.map((line) => client.run(line, options, { signal, priority: "search" })));
+    lines.length < 2 * client.nWorkers
+      ? Promise.all(lines.map((line) => client.run(line, options, hooks)))
+      : client.runMany(lines, options, hooks);
 }

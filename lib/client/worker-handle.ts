@@ -9,11 +9,14 @@ export type WorkerHandle = {
   stop(): void;
 };
 
+/** Address of the worker that the production build bundled apart (see next.config.ts); set while building. */
+const bundled = process.env.SIMULATION_WORKER;
+
 export function startBrowserWorker(): WorkerHandle {
-  const worker = new Worker(new URL("../../workers/simulation.worker.ts", import.meta.url), {
-    type: "module",
-    name: "simulation",
-  });
+  const options = { type: "module", name: "simulation" } as const;
+  const worker = bundled
+    ? new Worker(bundled, options)
+    : new Worker(new URL("../../workers/simulation.worker.ts", import.meta.url), options);
   const api = wrap<SimulationApi>(worker);
   return {
     api,

@@ -33,12 +33,12 @@ export type SearchProgress = {
 const lookedAt = { share: 1 / 4, fewest: 20 };
 const sortedBy = { share: 1 / 16, fewest: 10 };
 /** Runs of all replications spent on improving one set, and on mending one that was not confirmed. */
-const mostEffort = 40;
+const mostEffort = 28;
 const mendingEffort = 8;
 /** Sets put to the unseen weeks at most for one accepted risk. */
 const mostConfirmed = 3;
 /** What one accepted risk takes in runs of all replications, about; only for saying how far a search has come. */
-const usualEffort = 56;
+const usualEffort = 44;
 
 /**
  * Finds the cheapest set of buffer sizes for each accepted risk, and confirms it on weeks that the search has not seen.

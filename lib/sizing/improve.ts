@@ -4,9 +4,11 @@ import { isBetter } from "./is-better";
 import { withLevel } from "./problem";
 import type { Reading, Sample, Search } from "./runs";
 
-/** Sets chosen from the curves of one look round, each from what the one before turned out. */
-const mostTries = 4;
+/** Sets chosen from the curves of one look round, each from what the one before turned out: over the look's weeks, over all. */
+const mostRoughTries = 2;
+const mostTries = 3;
 /** A set this close to the accepted risk leaves nothing worth another try; share of weeks. */
+const roughly = 0.008;
 const enough = 0.001;
 /** A look moves a buffer so far that about so many weeks more turn bad, and by at most this part of its size. */
 const wantedChange = 0.006;
@@ -62,8 +64,8 @@ export async function improveSizes(
     // Each look round is at other weeks, so that none of them is fitted to for long.
     const nParts = Math.floor(problem.replications / looked);
     const sample: Sample = { ...whole, replications: looked, firstReplication: (round % nParts) * looked };
-    const choices = await lookRound(search, at, sample, trust, knowledge);
-    const { tried, price } = await tryLevels(search, choices, at, accepted);
+    const { choices, from } = await lookRound(search, at, sample, trust, knowledge);
+    const { tried, price } = await tryLevels(search, choices, at, from, sample, accepted);
     // Beyond the accepted risk a set costs more than mending it would: a set a little too risky is often a better
     // place to go on from than a dear one within the risk.
     const merit = ({ value, risk }: Reading) => value + 1.5 * price * Math.max(0, risk - accepted);
@@ -86,7 +88,7 @@ async function lookRound(
   sample: Sample,
   trust: number,
   { likely, seen }: Knowledge,
-): Promise<Choice[]> {
+): Promise<{ choices: Choice[]; from: Reading }> {
   const steps = tops.map((_, b) => {
     const level = at.levels[b];
     const curve = seen[b].length > 0 ? fitSeen(seen[b], likely[b]) : curveThrough(level, unknownShare, likely[b]);
@@ -106,7 +108,7 @@ async function lookRound(
     seen[b].push({ ...observe(from, moved[i], b), age: 0 });
     costs[b] = (moved[i].value - from.value) / (moved[i].levels[b] - from.levels[b]);
   });
-  return tops.map((top, b): Choice => {
+  const choices = tops.map((top, b): Choice => {
     const curve = seen[b].length > 0 ? fitSeen(seen[b], likely[b]) : curveThrough(0, unknownShare, likely[b]);
     const level = at.levels[b];
     // Down no further than was looked at: what lies beyond may fall off a cliff that the curve does not know.
@@ -114,6 +116,7 @@ async function lookRound(
     const reach = Math.min(2 * steps[b], Math.max(steps[b], Math.round(trust / curve.k)));
     return { curve, cost: costs[b], from: level, lowest, highest: Math.min(top, level + reach) };
   });
+  return { choices, from };
 }
 
 function fitSeen(seen: Knowledge["seen"][number], likely: number): Curve {
@@ -124,35 +127,62 @@ function fitSeen(seen: Knowledge["seen"][number], likely: number): Curve {
   return fitCurve(weighed, likely);
 }
 
-/** Runs the sets that the curves suggest over all weeks, allowing in each for what the ones before turned out worse. */
+/**
+ * Runs the sets that the curves suggest, allowing in each for what the ones before turned out worse: first over the weeks
+ * of the look, which is cheap, then over all weeks.
+ * @param seen - The base over the weeks of the look.
+ */
 async function tryLevels(
   { runs, whole }: Search,
   choices: readonly Choice[],
   base: Reading,
+  seen: Reading,
+  sample: Sample,
   accepted: number,
 ): Promise<{ tried: Reading[]; price: number }> {
-  const tried: Reading[] = [];
   const room = accepted - base.risk;
+  const rough = createAllowance(room, roughly);
+  for (let i = 0; i < mostRoughTries && !rough.isMet(); i++) {
+    const { levels } = chooseLevels(choices, room - rough.value());
+    const [reading] = await runs.read([levels], sample);
+    rough.learn(changeAt(choices, levels), reading.risk - seen.risk);
+  }
+  const tried: Reading[] = [];
+  const exact = createAllowance(room, enough, rough.value());
   let price = 0;
-  let allowance = 0;
-  // Allowances with which a set came out too risky, and within the risk.
-  let [tooLittle, plenty] = [-Infinity, Infinity];
-  for (let i = 0; i < mostTries; i++) {
-    const chosen = chooseLevels(choices, room - allowance);
+  for (let i = 0; i < mostTries && !exact.isMet(); i++) {
+    const chosen = chooseLevels(choices, room - exact.value());
     price = chosen.price;
     if (tried.some(({ levels }) => levels.join() === chosen.levels.join())) break;
     const [reading] = await runs.read([chosen.levels], whole);
     tried.push(reading);
-    if (reading.risk > accepted) tooLittle = Math.max(tooLittle, allowance);
-    else if (reading.risk > accepted - enough) break;
-    else plenty = Math.min(plenty, allowance);
-    const predicted = changeAt(choices, chosen.levels);
-    const change = reading.risk - base.risk;
-    const isBracketed = tooLittle > -Infinity && plenty < Infinity;
-    if (isBracketed) allowance = (tooLittle + plenty) / 2;
-    // A rise that came out larger than foretold will do so in proportion; any other error is taken as it is.
-    else if (predicted > 0.01 && change > predicted) allowance = room - (room * predicted) / change;
-    else allowance = change - predicted;
+    exact.learn(changeAt(choices, chosen.levels), reading.risk - base.risk);
   }
   return { tried, price };
+}
+
+/**
+ * How much less room to ask the curves for, so that sets come out within the room there is.
+ * @param within - A set that leaves no more than this of the room is good enough.
+ */
+function createAllowance(room: number, within: number, first = 0) {
+  // Allowances with which a set came out too risky, and within the room.
+  let [tooLittle, plenty] = [-Infinity, Infinity];
+  let value = first;
+  let isMet = false;
+  return {
+    value: () => value,
+    isMet: () => isMet,
+    learn(predicted: number, change: number): void {
+      isMet = change <= room && change > room - within;
+      if (isMet) return;
+      if (change > room) tooLittle = Math.max(tooLittle, value);
+      else plenty = Math.min(plenty, value);
+      const isBracketed = tooLittle > -Infinity && plenty < Infinity;
+      if (isBracketed) value = (tooLittle + plenty) / 2;
+      // A rise that came out larger than foretold will do so in proportion; any other error is taken as it is.
+      else if (predicted > 0.01 && change > predicted) value = room - (room * predicted) / change;
+      else value = change - predicted;
+    },
+  };
 }

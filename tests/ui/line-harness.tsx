@@ -94,6 +94,7 @@ export function createClient(isHeld: (hooks: RunHooks) => boolean = () => false)
   const client: SimulationClient = {
     nWorkers: 1,
     run,
+    runMany: (lines, options, hooks) => Promise.all(lines.map((line) => run(line, options, hooks))),
     lowestLevels: () => Promise.reject(new Error("not asked for here")),
     traceWeek: () => Promise.reject(new Error("not asked for here")),
     close: () => undefined,

@@ -6,6 +6,7 @@ import example from "@/lib/line/example.json";
 import type { Line } from "@/lib/line/types";
 import { lowestLevels, simulate, type RunOptions, type RunResult } from "@/lib/simulation";
 import { traceWeek } from "@/lib/simulation/trace";
+import { withSize } from "@/lib/sizing/with-size";
 import type { Answer } from "@/workers/simulation-api";
 import { createFakeCrew, type FakeCrew } from "./fake-workers";
 
@@ -54,6 +55,24 @@ describe("createSimulationClient", () => {
       },
     }));
     expect(await createClient(crew, 3).run(line, options)).toEqual(simulate(line, options));
+  });
+
+  it.each([1, 3])("runs many lines whole, each as it would be alone, with %i workers", async (nWorkers) => {
+    const lines = [600, 900, 1200, 1500, 1800].map((size) => withSize(line, "lam", size));
+    const results = await createClient(createFakeCrew(), nWorkers).runMany(lines, options);
+    expect(results).toEqual(lines.map((one) => simulate(one, options)));
+    expect(await createClient(createFakeCrew()).runMany([], options)).toEqual([]);
+  });
+
+  it("fails all of many lines where one cannot run, and ends them when cancelled", async () => {
+    const broken = { ...line, nodes: line.nodes.filter(({ kind }) => kind !== "customer") };
+    await expect(createClient(createFakeCrew()).runMany([line, broken, line], options)).rejects.toThrow();
+    const abort = new AbortController();
+    const running = createClient(createFakeCrew(() => ({ simulate: never }) as never)).runMany([line, line], options, {
+      signal: abort.signal,
+    });
+    abort.abort();
+    await expect(running).rejects.toThrow("cancelled");
   });
 
   it("runs the replications from firstReplication on", async () => {
