@@ -5,9 +5,11 @@ import {
   lowestLevels,
   mergeRuns,
   simulate,
+  stockNeeds,
   type LowestLevels,
   type RunOptions,
   type RunResult,
+  type StockNeeds,
 } from "@/lib/simulation";
 import { traceWeek, type WeekTrace } from "@/lib/simulation/trace";
 
@@ -20,6 +22,7 @@ export type SimulationApi = {
   simulate(options: RunOptions): Answer<RunResult>;
   merge(parts: RunResult[]): Answer<RunResult>;
   lowestLevels(options: RunOptions, bufferId: string): Answer<LowestLevels>;
+  stockNeeds(options: RunOptions): Answer<StockNeeds>;
   traceWeek(options: RunOptions, replication: number, week: number): Answer<WeekTrace>;
 };
 
@@ -53,6 +56,11 @@ export function createSimulationApi(now: () => number): SimulationApi {
       answer(
         () => lowestLevels(lineOf(), options, bufferId),
         ({ lowest }) => [lowest.buffer],
+      ),
+    stockNeeds: (options) =>
+      answer(
+        () => stockNeeds(lineOf(), options),
+        ({ needs }) => [needs.buffer],
       ),
     traceWeek: (options, replication, week) =>
       answer(

@@ -11,12 +11,14 @@ type Props = {
   acceptedRisk: number;
   currentSize: number;
   restSize: number | null;
+  /** A value as the axis shows it. */
+  showValue?(value: number): string;
 };
 
 const height = 270;
 
 /** P5, the accepted risk's percentile and P50 against size, with 95 % bands; today's size and the one past which more stops helping. */
-export function SweepChart({ rows, acceptedRisk, currentSize, restSize }: Props) {
+export function SweepChart({ rows, acceptedRisk, currentSize, restSize, showValue = formatCount }: Props) {
   const isNarrow = useMediaQuery("(max-width: 639px)");
   const [width, margin] = isNarrow ? [400, 96] : [680, 150];
   if (rows.length < 2) return null;
@@ -61,12 +63,12 @@ export function SweepChart({ rows, acceptedRisk, currentSize, restSize }: Props)
   ].filter(({ key }, i, all) => key !== "p05" || all.findIndex((other) => other.name === "P5") === i);
   const gridStep = 1 - from > 0.5 ? 0.2 : 1 - from > 0.2 ? 0.1 : 0.05;
   const grid = Array.from({ length: 30 }, (_, i) => 1 - i * gridStep).filter((share) => share >= from - 1e-9);
-  const label = `Fill rate by size: ${rows.map((row) => `${formatCount(row.size)}: ${name} ${formatPercent(row.atRisk.value)}`).join("; ")}`;
+  const label = `Fill rate by size: ${rows.map((row) => `${showValue(row.size)}: ${name} ${formatPercent(row.atRisk.value)}`).join("; ")}`;
   const ends = spread(
     series.map(({ of: read }) => y(read(rows[rows.length - 1]).value) + 4),
     height - 30,
   );
-  const named = labelled(rows.map(({ size }) => ({ at: x(size), width: 10 + formatCount(size).length * 7 })));
+  const named = labelled(rows.map(({ size }) => ({ at: x(size), width: 10 + showValue(size).length * 7 })));
   const isInside = (size: number) => size >= first && size <= last;
   return (
     <svg viewBox={`0 0 ${width} ${height}`} width="100%" className="max-w-[860px]" role="img" aria-label={label}>
@@ -113,7 +115,7 @@ export function SweepChart({ rows, acceptedRisk, currentSize, restSize }: Props)
         <>
           <path d={`M${x(currentSize)} 4V${height - 30}`} stroke="var(--ink)" strokeDasharray="4 3" />
           <text x={x(currentSize) + 5} y={height - 36} className="axis-text">
-            now {formatCount(currentSize)}
+            now {showValue(currentSize)}
           </text>
         </>
       )}
@@ -126,7 +128,7 @@ export function SweepChart({ rows, acceptedRisk, currentSize, restSize }: Props)
           <path d={`M${x(row.size)} ${height - 30}v6`} stroke="var(--ink)" />
           {named.has(i) && (
             <text x={x(row.size)} y={height - 9} textAnchor="middle" className="axis-text">
-              {formatCount(row.size)}
+              {showValue(row.size)}
             </text>
           )}
         </g>

@@ -9,47 +9,62 @@ import { SwitchTwo } from "@/components/ui/switch-two";
 import { TextField } from "@/components/ui/text-field";
 import { useLine } from "@/lib/client/line-state";
 import { formatCount, plural } from "@/lib/format";
-import { listRange, readSizes, suggestRange } from "@/lib/sizing/sweep";
-import { useSweep } from "./sweep-store";
+import type { Line } from "@/lib/line/types";
+import { type Quantity, quantitiesOf, readQuantity, variedNodes, withQuantity } from "@/lib/sizing/quantities";
+import { factorOf, listRange, mostRuns, mostSeconds, readSizes, suggestRange } from "@/lib/sizing/sweep";
+import { useSweep, type Varied } from "./sweep-store";
+import { kindOf, showBare } from "./sweep-values";
 
 type Range = { from: number | null; to: number | null; step: number | null };
+type Chosen = { node: string | null; path: string };
 
-/** Which buffer, which sizes. */
+const wholeLine = "whole line";
+
+/** Which number, and which values of it; a second one beside it if wanted. */
 export function SweepForm() {
   const { parsed, digest, options, selection } = useLine();
   const { start, progress } = useSweep();
-  const buffers = useMemo(() => parsed?.nodes.filter((node) => node.kind === "buffer") ?? [], [parsed]);
-  const [wanted, setWanted] = useState<string | null>(() => selection[0] ?? null);
+  const [wanted, setWanted] = useState<Chosen | null>(() => (selection[0] ? { node: selection[0], path: "" } : null));
+  const [second, setSecond] = useState<(Chosen & { text: string }) | null>(null);
   const [way, setWay] = useState<"range" | "list">("range");
   const [typed, setTyped] = useState<Record<string, Range>>({});
   const [list, setList] = useState("");
   const [isTried, setTried] = useState(false);
-  const buffer = buffers.find(({ id }) => id === wanted) ?? buffers[0];
-  if (!parsed || !digest || !buffer)
-    return <p className="text-ink-2">The line has faults and cannot run, so sizes cannot be compared yet.</p>;
-  const range = typed[buffer.id] ?? suggestRange(buffer.size);
-  const read = way === "range" ? listRange(range.from, range.to, range.step) : readSizes(list);
-  const refusal = "refusal" in read ? read.refusal : null;
-  const set = (change: Partial<Range>) => setTyped({ ...typed, [buffer.id]: { ...range, ...change } });
+  const first = useMemo(() => parsed && chooseQuantity(parsed, wanted), [parsed, wanted]);
+  const other = useMemo(() => parsed && second && chooseQuantity(parsed, second), [parsed, second]);
+  if (!parsed || !digest || !first)
+    return <p className="text-ink-2">The line has faults and cannot run, so nothing can be compared yet.</p>;
+  const kind = kindOf(first);
+  const factor = factorOf(first);
+  const key = `${first.node ?? wholeLine} ${first.path}`;
+  const range = typed[key] ?? suggestRange(readQuantity(parsed, first), kind);
+  const read = way === "range" ? listRange(range.from, range.to, range.step, kind) : readSizes(list, kind);
+  const besides = second && other ? readSizes(second.text, kindOf(other), mostSeconds) : null;
+  const refusal = findRefusal(parsed, first, read, other, besides);
+  const nRuns = ("sizes" in read ? read.sizes.length : 0) * (besides && "sizes" in besides ? besides.sizes.length : 1);
+  const set = (change: Partial<Range>) => setTyped({ ...typed, [key]: { ...range, ...change } });
+  const isSize = first.path === "size";
 
   function run() {
     setTried(true);
-    if ("sizes" in read && parsed && digest) start(parsed, digest, buffer.id, read.sizes, options);
+    if (!parsed || !digest || !first || refusal || !("sizes" in read)) return;
+    const vary = (quantity: Quantity, values: readonly number[]): Varied => ({
+      quantity,
+      values,
+      nodeName: parsed.nodes.find(({ id }) => id === quantity.node)?.name ?? "Whole line",
+    });
+    const beside = other && besides && "sizes" in besides ? vary(other, besides.sizes) : null;
+    start(parsed, digest, vary(first, read.sizes), beside, options);
   }
 
   return (
     <div>
       <div className="flex flex-wrap items-end gap-x-3 gap-y-2">
         <h2 className="mr-1 flex h-8 items-center text-xl font-title tracking-[-.01em]">What each step of</h2>
-        <Pick
-          label="Buffer"
-          value={buffer.id}
-          options={buffers.map(({ id, name }) => ({ value: id, label: name }))}
-          onChange={setWanted}
-        />
+        <QuantityPicks line={parsed} chosen={first} onChoose={setWanted} label="Of" />
         <span className="flex h-8 items-center text-xl font-title">buys</span>
         <SwitchTwo<"range" | "list">
-          label="How sizes are chosen"
+          label="How values are chosen"
           value={way}
           onChange={setWay}
           options={[
@@ -58,47 +73,140 @@ export function SweepForm() {
           ]}
         />
         {way === "range" ? (
-          <>
+          (["from", "to", "step"] as const).map((field) => (
             <NumberField
+              key={`${key} ${field}`}
               className="w-28"
-              label="From"
-              unit="units"
-              isWhole
-              value={range.from}
-              onChange={(from) => set({ from })}
+              label={{ from: "From", to: "To", step: "Step" }[field]}
+              unit={first.unit}
+              factor={factor}
+              isWhole={kind.isWhole}
+              value={range[field]}
+              onChange={(value) => set({ [field]: value })}
             />
-            <NumberField
-              className="w-28"
-              label="To"
-              unit="units"
-              isWhole
-              value={range.to}
-              onChange={(to) => set({ to })}
-            />
-            <NumberField
-              className="w-28"
-              label="Step"
-              unit="units"
-              isWhole
-              value={range.step}
-              onChange={(step) => set({ step })}
-            />
-          </>
+          ))
         ) : (
           <TextField
             className="w-80"
             isTyped
-            label="Sizes, units"
-            placeholder="900, 1200, 1500"
+            label={isSize ? "Sizes, units" : `Values${first.unit && `, ${first.unit}`}`}
+            placeholder={isSize ? "900, 1200, 1500" : exampleOf(parsed, first)}
             value={list}
             onChange={setList}
           />
         )}
         <Button kind="main" disabled={progress !== null} onClick={run}>
-          {"sizes" in read ? `Run ${formatCount(read.sizes.length)} ${plural(read.sizes.length, "size")}` : "Run sizes"}
+          {nRuns > 0 && !refusal
+            ? `Run ${formatCount(nRuns)} ${isSize && !second ? plural(nRuns, "size") : plural(nRuns, "value")}`
+            : isSize
+              ? "Run sizes"
+              : "Run values"}
         </Button>
       </div>
-      {refusal && (isTried || way === "range") && <ErrorLine className="mt-2">{refusal}</ErrorLine>}
+      <div className="mt-2 flex flex-wrap items-end gap-x-3 gap-y-2">
+        {second && other ? (
+          <>
+            <span className="flex h-8 items-center">each with</span>
+            <QuantityPicks
+              line={parsed}
+              chosen={other}
+              onChoose={(chosen) => setSecond({ ...chosen, text: "" })}
+              label="And of"
+            />
+            <TextField
+              className="w-64"
+              isTyped
+              label={`at up to ${mostSeconds} values${other.unit && `, ${other.unit}`}`}
+              placeholder={exampleOf(parsed, other)}
+              value={second.text}
+              onChange={(text) => setSecond({ ...second, text })}
+            />
+            <Button kind="bare" size="small" onClick={() => setSecond(null)}>
+              Leave it out
+            </Button>
+          </>
+        ) : (
+          <Button kind="bare" size="small" onClick={() => setSecond({ node: null, path: "", text: "" })}>
+            Vary a second number as well
+          </Button>
+        )}
+      </div>
+      {refusal && (isTried || (way === "range" && !second)) && <ErrorLine className="mt-2">{refusal}</ErrorLine>}
     </div>
   );
+}
+
+function QuantityPicks({
+  line,
+  chosen,
+  onChoose,
+  label,
+}: {
+  line: Line;
+  chosen: Quantity;
+  onChoose(chosen: Chosen): void;
+  label: string;
+}) {
+  const nodes = variedNodes(line).filter(({ id }) => quantitiesOf(line, id).length > 0);
+  const quantities = quantitiesOf(line, chosen.node);
+  return (
+    <>
+      <Pick
+        label={label}
+        value={chosen.node ?? wholeLine}
+        options={nodes.map(({ id, name }) => ({ value: id ?? wholeLine, label: name, hint: kindName(line, id) }))}
+        onChange={(id) => onChoose({ node: id === wholeLine ? null : id, path: "" })}
+      />
+      <Pick
+        label="the"
+        value={chosen.path}
+        options={quantities.map(({ path, name }) => ({ value: path, label: name }))}
+        onChange={(path) => onChoose({ node: chosen.node, path })}
+      />
+    </>
+  );
+}
+
+const kindName = (line: Line, id: string | null) => line.nodes.find((node) => node.id === id)?.kind ?? "";
+
+/** The quantity asked for, or the first of its node; without a node that is there, the size of the first buffer. */
+function chooseQuantity(line: Line, chosen: Chosen | null): Quantity | null {
+  if (chosen) {
+    const own = quantitiesOf(line, chosen.node);
+    const found = own.find(({ path }) => path === chosen.path) ?? own.find(({ path }) => path === "size") ?? own[0];
+    if (found) return found;
+  }
+  const [first] = variedNodes(line).filter(({ id }) => quantitiesOf(line, id).length > 0);
+  return first ? (quantitiesOf(line, first.id)[0] ?? null) : null;
+}
+
+function exampleOf(line: Line, quantity: Quantity): string {
+  const { from, to, step } = suggestRange(readQuantity(line, quantity), kindOf(quantity));
+  return [from, from + step, to].map((value) => showBare(value, quantity.unit).replaceAll("\u202f", "")).join(", ");
+}
+
+type Read = { sizes: number[] } | { refusal: string };
+
+/** Why this cannot be run, or null; the values are tried on the line one by one. */
+function findRefusal(
+  line: Line,
+  first: Quantity,
+  read: Read,
+  other: Quantity | null,
+  besides: Read | null,
+): string | null {
+  if ("refusal" in read) return read.refusal;
+  if (besides && "refusal" in besides) return besides.refusal;
+  if (other && other.node === first.node && other.path === first.path)
+    return "Choose two different numbers, or leave the second one out.";
+  const nRuns = read.sizes.length * (besides?.sizes.length ?? 1);
+  if (nRuns > mostRuns) return `${formatCount(nRuns)} runs are too many: at most ${mostRuns}. Use fewer values.`;
+  try {
+    for (const value of read.sizes) withQuantity(line, first, value);
+    for (const value of besides?.sizes ?? []) withQuantity(line, other!, value);
+  } catch (error) {
+    if (error instanceof RangeError) return error.message;
+    throw error;
+  }
+  return null;
 }

@@ -2,6 +2,7 @@
 
 import { createContext, type ReactNode, use, useMemo, useState } from "react";
 import { type Reading, useLine } from "@/lib/client/line-state";
+import { toRunOptions } from "@/lib/client/readings";
 import { useJob } from "@/lib/client/use-job";
 import { useSimulation } from "@/lib/client/use-simulation";
 import { digestLine } from "@/lib/line";
@@ -9,37 +10,41 @@ import type { Line } from "@/lib/line/types";
 import type { ScenarioOptions, Sweep, SweepRow } from "@/lib/schema/lines";
 import { pairedDifference, percentile } from "@/lib/simulation";
 import type { RunResult } from "@/lib/simulation/types";
-import { withSize } from "@/lib/sizing/with-size";
+import { type Quantity, readQuantity, withQuantity } from "@/lib/sizing/quantities";
 
-/** A comparison of sizes: the line it is of, the options of each run, and a reading for each size done. */
+/** A quantity and the values it takes. */
+export type Varied = { quantity: Quantity; nodeName: string; values: readonly number[] };
+
+/** A sweep: the line it is of, the options of each run, and a reading for each pair of values done. */
 export type SweepRun = {
   scenarioId: string;
   digest: string;
   options: ScenarioOptions;
-  bufferId: string;
-  bufferName: string;
-  currentSize: number;
-  nSizes: number;
-  readings: { size: number; line: Line; reading: Reading }[];
+  first: Varied & { now: number };
+  second: (Varied & { now: number }) | null;
+  readings: SweepReading[];
 };
+
+/** `beside`: the second quantity's value, null where only one is varied. */
+export type SweepReading = { value: number; beside: number | null; line: Line; reading: Reading };
 
 type SweepState = {
   run: SweepRun | null;
   /** Share done while running. */
-  progress: { size: number; share: number } | null;
+  progress: { value: number; beside: number | null; share: number } | null;
   error: string | null;
-  start(line: Line, digest: string, bufferId: string, sizes: readonly number[], options: ScenarioOptions): void;
+  start(line: Line, digest: string, first: Varied, second: Varied | null, options: ScenarioOptions): void;
   cancel(): void;
 };
 
 const SweepContext = createContext<SweepState | null>(null);
 
-/** Keeps the last comparison of sizes while one moves between the views of a line. */
+/** Keeps the last sweep while one moves between the views of a line. */
 export function SweepProvider({ children }: { children: ReactNode }) {
   const { scenario } = useLine();
   const client = useSimulation();
   const [run, setRun] = useState<SweepRun | null>(null);
-  const { state: job, start, cancel } = useJob<{ size: number; share: number }, void>();
+  const { state: job, start, cancel } = useJob<NonNullable<SweepState["progress"]>, void>();
   const scenarioId = scenario.id;
 
   const state = useMemo(
@@ -48,38 +53,36 @@ export function SweepProvider({ children }: { children: ReactNode }) {
       progress: job.status === "running" ? job.progress : null,
       error: job.status === "failed" ? job.message : null,
       cancel,
-      start(line, digest, bufferId, sizes, options) {
-        void start({ size: sizes[0], share: 0 }, async (signal, onProgress) => {
-          const buffer = line.nodes.find(({ id }) => id === bufferId);
-          if (buffer?.kind !== "buffer") throw new Error("the buffer is no longer on the line");
-          const { acceptedRisk, ...runOptions } = options;
+      start(line, digest, first, second, options) {
+        const pairs = (second?.values ?? [null]).flatMap((beside) => first.values.map((value) => ({ value, beside })));
+        void start({ ...pairs[0], share: 0 }, async (signal, onProgress) => {
+          const withNow = (varied: Varied) => ({ ...varied, now: readQuantity(line, varied.quantity) });
           const base = {
             scenarioId,
             digest,
             options,
-            bufferId,
-            bufferName: buffer.name,
-            currentSize: buffer.size,
-            nSizes: sizes.length,
+            first: withNow(first),
+            second: second && withNow(second),
           };
-          const readings: SweepRun["readings"] = [];
+          const readings: SweepReading[] = [];
           setRun({ ...base, readings });
-          for (const [i, size] of sizes.entries()) {
-            const sized = withSize(line, bufferId, size);
-            const show = (share: number) => onProgress({ size, share: (i + share) / sizes.length });
+          for (const [i, { value, beside }] of pairs.entries()) {
+            const other = second && beside !== null ? withQuantity(line, second.quantity, beside) : line;
+            const varied = withQuantity(other, first.quantity, value);
+            const show = (share: number) => onProgress({ value, beside, share: (i + share) / pairs.length });
             show(0);
-            const result = await client.run(sized, runOptions, {
+            const result = await client.run(varied, toRunOptions(options), {
               signal,
               onProgress: ({ replications, total }) => show(replications / total),
             });
             const reading: Reading = {
               result,
-              digest: digestLine(sized),
-              options: { ...runOptions, acceptedRisk },
+              digest: digestLine(varied),
+              options,
               ranAt: new Date().toISOString(),
               engine: result.engine,
             };
-            readings.push({ size, line: sized, reading });
+            readings.push({ value, beside, line: varied, reading });
             setRun({ ...base, readings: [...readings] });
           }
         });
@@ -97,7 +100,12 @@ export function useSweep(): SweepState {
   return state;
 }
 
-/** The figures of one size that tables, charts and links show. */
+/** Values asked for in all. */
+export function countAsked({ first, second }: Pick<SweepRun, "first" | "second">): number {
+  return first.values.length * (second?.values.length ?? 1);
+}
+
+/** The figures of one value that tables, charts and links show. */
 export function toRow(size: number, result: RunResult, before: RunResult | null, acceptedRisk: number): SweepRow {
   const { p05, p10, p50, risk, moneyTiedUp, costPerYear } = result.summary;
   return {
@@ -113,15 +121,18 @@ export function toRow(size: number, result: RunResult, before: RunResult | null,
   };
 }
 
-/** The comparison as it goes into a link. */
-export function toSweep({ bufferId, bufferName, currentSize, readings }: SweepRun, acceptedRisk: number): Sweep {
+/** A sweep of the first quantity as it goes into a link; with two, at one value of the second. */
+export function toSweep({ first, readings }: SweepRun, acceptedRisk: number, beside: number | null = null): Sweep {
+  const { quantity, nodeName, now } = first;
+  const own = readings.filter((one) => one.beside === beside);
   return {
-    bufferId,
-    bufferName,
-    unit: "units",
-    currentSize,
-    rows: readings.map(({ size, reading }, i) =>
-      toRow(size, reading.result, readings[i - 1]?.reading.result ?? null, acceptedRisk),
+    bufferId: quantity.node ?? "line",
+    bufferName: nodeName,
+    ...(quantity.path === "size" ? {} : { quantity: quantity.name }),
+    unit: quantity.unit,
+    currentSize: now,
+    rows: own.map(({ value, reading }, i) =>
+      toRow(value, reading.result, own[i - 1]?.reading.result ?? null, acceptedRisk),
     ),
   };
 }

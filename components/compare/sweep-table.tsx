@@ -8,22 +8,23 @@ import {
   percentileName,
   spreadText,
 } from "@/lib/format";
-import type { SweepRow } from "@/lib/schema/lines";
+import type { Sweep, SweepRow } from "@/lib/schema/lines";
 import { findRest, pricesOf } from "@/lib/sizing/sweep";
+import { sayQuantity, showBare, showValue, valueHead } from "./sweep-values";
 
 type Props = {
-  rows: readonly SweepRow[];
+  sweep: Sweep;
   acceptedRisk: number;
-  currentSize: number;
   currency: string;
   /** A control at the end of each row. */
   action?(row: SweepRow): ReactNode;
 };
 
 /** Sizes with their percentiles, what each step gains and what it costs. */
-export function SweepTable({ rows, acceptedRisk, currentSize, currency, action }: Props) {
+export function SweepTable({ sweep, acceptedRisk, currency, action }: Props) {
+  const { rows, currentSize, unit } = sweep;
   const prices = pricesOf(rows);
-  const rest = findRest(rows);
+  const rest = restOf(sweep);
   const name = percentileName(acceptedRisk);
   const names = ["P5", name, "P50"].filter((one, i, all) => all.indexOf(one) === i);
   return (
@@ -31,7 +32,7 @@ export function SweepTable({ rows, acceptedRisk, currentSize, currency, action }
       <table className="sheet-table">
         <thead>
           <tr>
-            <th scope="col">Size, units</th>
+            <th scope="col">{valueHead(sweep)}</th>
             {names.map((one) => (
               <th key={one} scope="col" className="text-right!">
                 {one}
@@ -59,7 +60,7 @@ export function SweepTable({ rows, acceptedRisk, currentSize, currency, action }
             return (
               <tr key={row.size} data-selected={row.size === rest}>
                 <th scope="row" className="text-left whitespace-nowrap">
-                  {formatCount(row.size)}{" "}
+                  {showBare(row.size, unit)}{" "}
                   {row.size === currentSize && <span className="font-text text-ink-3">now</span>}
                 </th>
                 {names.map((one) => {
@@ -98,13 +99,25 @@ export function SweepTable({ rows, acceptedRisk, currentSize, currency, action }
   );
 }
 
-/** The finding of a comparison of sizes, in a sentence. */
-export function saySweep(bufferName: string, rows: readonly SweepRow[], acceptedRisk: number): string {
-  const rest = findRest(rows);
+/** The size past which more stock stops helping; only stock has one. */
+export function restOf({ quantity, rows }: Sweep): number | null {
+  return quantity === undefined ? findRest(rows) : null;
+}
+
+/** The finding of a sweep, in a sentence. */
+export function saySweep(sweep: Sweep, acceptedRisk: number): string {
+  const { rows, unit } = sweep;
+  const rest = restOf(sweep);
   const name = percentileName(acceptedRisk);
-  if (rows.length < 3) return `${bufferName}: ${formatCount(rows.length)} sizes compared`;
-  if (rest === null)
-    return `${bufferName}: up to ${formatCount(rows[rows.length - 1].size)} every step still lifts ${name}`;
-  if (rest === rows[0].size) return `${bufferName}: no step above ${formatCount(rest)} lifts ${name} clearly`;
-  return `${bufferName}: past ${formatCount(rest)}, a step of stock no longer lifts ${name} clearly`;
+  const what = sayQuantity(sweep);
+  const [first, last] = [rows[0], rows[rows.length - 1]];
+  if (sweep.quantity !== undefined) {
+    if (rows.length < 2) return `${what}: one value run`;
+    const share = ({ atRisk }: SweepRow) => formatShare(atRisk).value;
+    return `${what}: from ${showValue(first.size, unit)} to ${showValue(last.size, unit)}, ${name} goes from ${share(first)} to ${share(last)}`;
+  }
+  if (rows.length < 3) return `${what}: ${formatCount(rows.length)} sizes compared`;
+  if (rest === null) return `${what}: up to ${formatCount(last.size)} every step still lifts ${name}`;
+  if (rest === first.size) return `${what}: no step above ${formatCount(rest)} lifts ${name} clearly`;
+  return `${what}: past ${formatCount(rest)}, a step of stock no longer lifts ${name} clearly`;
 }

@@ -7,10 +7,10 @@ import { CostList } from "@/components/readings/cost-list";
 import { CustomerTable } from "@/components/readings/customer-table";
 import { FillRates } from "@/components/readings/fill-rates";
 import { PercentileTable } from "@/components/readings/percentile-table";
-import { saySweep, SweepTable } from "@/components/compare/sweep-table";
+import { restOf, saySweep, SweepTable } from "@/components/compare/sweep-table";
+import { sayQuantity, showBare } from "@/components/compare/sweep-values";
 import type { SharedPage, SharedVersion } from "@/lib/schema/lines";
 import type { RunResult } from "@/lib/simulation/types";
-import { findRest } from "@/lib/sizing/sweep";
 import { Assumptions } from "./assumptions";
 import { Cautions } from "./cautions";
 import { KeyFigures } from "./key-figures";
@@ -43,18 +43,22 @@ export function SharedSheet({ page, results }: Props) {
         {first && <Version version={first} result={results[0] ?? null} isOneOfMany={versions.length > 1} />}
         {sweep && first && (
           <section>
-            <h2 className="border-b border-ink pb-1 text-xl font-title">Sizes of {sweep.bufferName} compared</h2>
-            <p className="my-2 text-l">{saySweep(sweep.bufferName, sweep.rows, first.options.acceptedRisk)}.</p>
+            <h2 className="border-b border-ink pb-1 text-xl font-title">
+              {sweep.quantity === undefined
+                ? `Sizes of ${sweep.bufferName} compared`
+                : `${sayQuantity(sweep)}, compared`}
+            </h2>
+            <p className="my-2 text-l">{saySweep(sweep, first.options.acceptedRisk)}.</p>
             <SweepChart
               rows={sweep.rows}
               acceptedRisk={first.options.acceptedRisk}
               currentSize={sweep.currentSize}
-              restSize={findRest(sweep.rows)}
+              restSize={restOf(sweep)}
+              showValue={(value) => showBare(value, sweep.unit)}
             />
             <SweepTable
-              rows={sweep.rows}
+              sweep={sweep}
               acceptedRisk={first.options.acceptedRisk}
-              currentSize={sweep.currentSize}
               currency={first.document.money.currency}
             />
           </section>

@@ -14,6 +14,7 @@ import { HeldBack } from "./held-back";
 import { QuestionBar } from "./question-bar";
 import { SearchStatus } from "./search-status";
 import { SizesTable } from "./sizes-table";
+import { WeekNeeds } from "./week-needs";
 
 /** The cheapest set of buffers for an accepted risk, and what each step of risk costs. */
 export function SizingView() {
@@ -21,7 +22,15 @@ export function SizingView() {
   return (
     <>
       <QuestionBar />
-      {search ? <Found search={search} /> : <NothingYet />}
+      <div className="px-4 pt-3 pb-8 sm:px-5">
+        {search ? <Found search={search} /> : <NothingYet />}
+        <WeekNeeds />
+        <p className="mt-4 text-s text-ink-3">
+          Estimates from the line as drawn; the cheapest set found, not proof that there is no cheaper one. Stock on the
+          floor and in racks: check loads, fire load and rules for hazardous goods with qualified people; for parts on
+          which safety depends, keep what your own rules ask for.
+        </p>
+      </div>
     </>
   );
 }
@@ -29,7 +38,7 @@ export function SizingView() {
 function NothingYet() {
   const { start, refusal } = useSizing();
   return (
-    <div className="px-4 py-5 sm:px-5">
+    <div className="py-2">
       {refusal ? (
         <Empty title="No search yet">{refusal}</Empty>
       ) : (
@@ -67,7 +76,7 @@ function Found({ search }: { search: SizingSearch }) {
       return { risk, money: found ? moneyOf(found.confirmed) : null, isReached: found?.reached ?? false };
     });
   return (
-    <div className="px-4 pt-3 pb-8 sm:px-5">
+    <div>
       <SearchStatus search={search} />
       <div className="mt-3 grid gap-x-6 gap-y-6 xl:grid-cols-[minmax(0,0.95fr)_minmax(0,1fr)] xl:[&>*+*]:border-l xl:[&>*+*]:border-rule xl:[&>*+*]:pl-6">
         <section className="min-w-0">
@@ -108,11 +117,6 @@ function Found({ search }: { search: SizingSearch }) {
         )}
       </div>
       <FormulaTable search={search} point={point} />
-      <p className="mt-4 text-s text-ink-3">
-        Estimates from the line as drawn; the cheapest set found, not proof that there is no cheaper one. Stock on the
-        floor and in racks: check loads, fire load and rules for hazardous goods with qualified people; for parts on
-        which safety depends, keep what your own rules ask for.
-      </p>
     </div>
   );
 }

@@ -1,7 +1,8 @@
 import { and, desc, eq, getTableColumns, inArray, isNull } from "drizzle-orm";
 import { AppError } from "@/lib/errors";
+import type { DraftLine } from "@/lib/line/types";
 import type { CreateShareInput } from "@/lib/schema/line-inputs";
-import type { ShareSummary } from "@/lib/schema/lines";
+import type { ShareSummary, Sweep } from "@/lib/schema/lines";
 import type { Ctx, Db } from "../context";
 import { line, scenario, scenarioVersion, share, shareVersion, user } from "../schema";
 import { addLogEntry } from "./log";
@@ -33,16 +34,23 @@ async function chooseVersions(ctx: Ctx, tx: Db, { versionIds, sweep }: CreateSha
   if (chosen.some((row) => row.lineId !== chosen[0].lineId)) {
     throw new AppError("invalid", "A link can show versions of one line only.");
   }
-  if (sweep && !chosen[0].document.nodes.some((node) => node.kind === "buffer" && node.id === sweep.bufferId)) {
-    throw new AppError("invalid", `The version shown has no buffer "${sweep.bufferName}".`);
+  if (sweep && !hasSwept(chosen[0].document, sweep)) {
+    throw new AppError("invalid", `The version shown has no "${sweep.bufferName}".`);
   }
   return chosen;
+}
+
+function hasSwept({ nodes }: DraftLine, { bufferId, quantity }: Sweep): boolean {
+  if (quantity !== undefined) return bufferId === "line" || nodes.some(({ id }) => id === bufferId);
+  return nodes.some(({ kind, id }) => kind === "buffer" && id === bufferId);
 }
 
 function titleOf(chosen: Chosen[], { kind, sweep }: CreateShareInput): string {
   const nameOf = ({ scenarioName, number }: Chosen) => `${scenarioName}, version ${number}`;
   if (kind === "version") return nameOf(chosen[0]);
-  return sweep ? `Sizes of ${sweep.bufferName}: ${nameOf(chosen[0])}` : `Comparison: ${chosen.map(nameOf).join("; ")}`;
+  return sweep
+    ? `${sweep.quantity ? `${sweep.bufferName}, ${sweep.quantity}` : `Sizes of ${sweep.bufferName}`}: ${nameOf(chosen[0])}`
+    : `Comparison: ${chosen.map(nameOf).join("; ")}`;
 }
 
 /**

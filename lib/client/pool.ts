@@ -1,12 +1,12 @@
-import { transfer } from "comlink";
+import { type Remote, transfer } from "comlink";
 import type { Line } from "@/lib/line/types";
 import { checkOptions } from "@/lib/simulation/options";
 import type { WeekTrace } from "@/lib/simulation/trace-types";
 import type { RunOptions, RunResult } from "@/lib/simulation/types";
-import { listBuffers } from "@/workers/simulation-api";
+import { type Answer, listBuffers, type SimulationApi } from "@/workers/simulation-api";
 import { createBlockJob } from "./block-job";
 import { createCrew, type Call, type Job } from "./crew";
-import type { LowestLevels, Priority, RunHooks, SimulationClient } from "./simulation-client";
+import type { Priority, RunHooks, SimulationClient } from "./simulation-client";
 import { startBrowserWorker, type WorkerHandle } from "./worker-handle";
 
 export type PoolSettings = { nWorkers?: number; startWorker?(): WorkerHandle; now?(): number; startLimitMs?: number };
@@ -55,6 +55,38 @@ export function createSimulationClient(settings: PoolSettings = {}): SimulationC
     });
   }
 
+  /** Blocks of one run in the order of arrival; `first`: row of a block's first replication. */
+  async function runBlocks<Part>(
+    line: Line,
+    options: RunOptions,
+    hooks: RunHooks,
+    send: (api: Remote<SimulationApi>, part: RunOptions) => Promise<Answer<Part>>,
+  ): Promise<{ first: number; value: Part }[]> {
+    const checked = checkOptions(options);
+    const base = checked.firstReplication ?? 0;
+    const parts: { first: number; value: Part }[] = [];
+    return start(hooks, ({ resolve, reject }) => {
+      const report = createReporter(hooks, checked.replications, now);
+      return createBlockJob<{ first: number; value: Part }>({
+        line,
+        options: checked,
+        rank: rankOf(hooks),
+        nWorkers,
+        async send(api, part) {
+          const answer = await send(api, part);
+          if (!answer.ok) return answer;
+          return { ...answer, value: { first: (part.firstReplication ?? 0) - base, value: answer.value } };
+        },
+        onBlock(part, done) {
+          parts.push(part);
+          report.count(done);
+          if (done === checked.replications) resolve(parts);
+        },
+        fail: reject,
+      });
+    });
+  }
+
   return {
     nWorkers,
     async run(line, options, hooks = {}) {
@@ -84,31 +116,20 @@ export function createSimulationClient(settings: PoolSettings = {}): SimulationC
         createLinesJob(lines, checked, rankOf(hooks), resolve, reject),
       );
     },
+    async stockNeeds(line, options, hooks = {}) {
+      const parts = await runBlocks(line, options, hooks, (api, part) => api.stockNeeds(part));
+      const [{ value: head }] = parts;
+      const needs = new Int32Array(parts.reduce((sum, { value }) => sum + value.needs.length, 0));
+      const width = head.needs.length / head.nReplications;
+      for (const { first, value } of parts) needs.set(value.needs, first * width);
+      return { ...head, nReplications: needs.length / width, needs };
+    },
     async lowestLevels(line, options, bufferId, hooks = {}) {
-      const checked = checkOptions(options);
-      const base = checked.firstReplication ?? 0;
-      const nWeeks = checked.warmupWeeks + checked.weeks;
-      const lowest = new Int32Array(checked.replications * nWeeks);
-      return start<LowestLevels>(hooks, ({ resolve, reject }) => {
-        const report = createReporter(hooks, checked.replications, now);
-        return createBlockJob<{ first: number; levels: LowestLevels }>({
-          line,
-          options: checked,
-          rank: rankOf(hooks),
-          nWorkers,
-          async send(api, part) {
-            const answer = await api.lowestLevels(part, bufferId);
-            if (!answer.ok) return answer;
-            return { ...answer, value: { first: (part.firstReplication ?? 0) - base, levels: answer.value } };
-          },
-          onBlock({ first, levels }, done) {
-            lowest.set(levels.lowest, first * nWeeks);
-            report.count(done);
-            if (done === checked.replications) resolve({ nReplications: checked.replications, nWeeks, lowest });
-          },
-          fail: reject,
-        });
-      });
+      const parts = await runBlocks(line, options, hooks, (api, part) => api.lowestLevels(part, bufferId));
+      const [{ value: head }] = parts;
+      const lowest = new Int32Array(parts.reduce((sum, { value }) => sum + value.lowest.length, 0));
+      for (const { first, value } of parts) lowest.set(value.lowest, first * head.nWeeks);
+      return { ...head, nReplications: lowest.length / head.nWeeks, lowest };
     },
     async traceWeek(line, options, replication, week, hooks = {}) {
       const checked = checkOptions(options);

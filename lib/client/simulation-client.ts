@@ -1,5 +1,6 @@
 import type { Line } from "@/lib/line/types";
 import type { WeekTrace } from "@/lib/simulation/trace-types";
+import type { StockNeeds } from "@/lib/simulation/stock-needs";
 import type { RunOptions, RunResult } from "@/lib/simulation/types";
 
 export type Priority = "full" | "live" | "search";
@@ -21,6 +22,7 @@ export interface SimulationClient {
   run(line: Line, options: RunOptions, hooks?: RunHooks): Promise<RunResult>;
   /** Runs several lines, each as a whole on one worker; results in the order of the lines. For many short runs. */
   runMany(lines: readonly Line[], options: RunOptions, hooks?: Omit<RunHooks, "onProgress">): Promise<RunResult[]>;
+  stockNeeds(line: Line, options: RunOptions, hooks?: RunHooks): Promise<StockNeeds>;
   lowestLevels(line: Line, options: RunOptions, bufferId: string, hooks?: RunHooks): Promise<LowestLevels>;
   /** One week of one replication tick by tick, run again from its seed; `onProgress` is never called. */
   traceWeek(line: Line, options: RunOptions, replication: number, week: number, hooks?: RunHooks): Promise<WeekTrace>;

@@ -29,6 +29,7 @@ function createLazyClient(): SimulationClient {
     },
     run: (...args) => get().run(...args),
     runMany: (...args) => get().runMany(...args),
+    stockNeeds: (...args) => get().stockNeeds(...args),
     lowestLevels: (...args) => get().lowestLevels(...args),
     traceWeek: (...args) => get().traceWeek(...args),
     close: () => client?.close(),

@@ -13,10 +13,12 @@ export type WorkerHandle = {
 const bundled = process.env.SIMULATION_WORKER;
 
 export function startBrowserWorker(): WorkerHandle {
-  const options = { type: "module", name: "simulation" } as const;
   const worker = bundled
-    ? new Worker(bundled, options)
-    : new Worker(new URL("../../workers/simulation.worker.ts", import.meta.url), options);
+    ? new Worker(bundled, { type: "module", name: "simulation" })
+    : new Worker(new URL("../../workers/simulation.worker.ts", import.meta.url), {
+        type: "module",
+        name: "simulation",
+      });
   const api = wrap<SimulationApi>(worker);
   return {
     api,

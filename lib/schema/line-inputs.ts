@@ -1,7 +1,7 @@
 import { z } from "zod";
 import { draftLimits, DraftLineInput, LayoutInput, NotesInput } from "@/lib/line/draft-schema";
 import { limits } from "@/lib/line/limits";
-import { ScenarioOptions } from "./lines";
+import { ScenarioOptions, sweepUnits } from "./lines";
 
 /** Of lines and scenarios: what a register can show. */
 const nameLength = 120;
@@ -55,20 +55,18 @@ export const SaveAsScenarioInput = z.object({
 export type SaveAsScenarioInput = z.infer<typeof SaveAsScenarioInput>;
 
 const figure = z.object({ value: z.number(), halfWidth: z.number().min(0).nullable(), bound: z.number().optional() });
-const size = z
-  .int()
-  .min(0)
-  .max(2 ** 30);
+const value = z.number().min(-1e15).max(1e15);
 
 export const SweepInput = z.object({
   bufferId: z.string().min(1).max(limits.textLength),
   bufferName: z.string().max(draftLimits.nameLength),
-  unit: z.literal("units"),
-  currentSize: size,
+  quantity: z.string().max(limits.textLength).optional(),
+  unit: z.enum(sweepUnits),
+  currentSize: value,
   rows: z
     .array(
       z.object({
-        size,
+        size: value,
         gain: figure.nullable(),
         p05: figure,
         p10: figure,

@@ -125,8 +125,9 @@ export type ScenarioDetail = {
   draftReading: ReadingSummary | null;
 };
 
-/** One row of a size comparison: figures of one size of one buffer. */
+/** One row of a sweep: figures at one value of the number that is varied. */
 export type SweepRow = {
+  /** The value: a size, or what `Sweep.quantity` names; a share where the unit is %. */
   size: number;
   /** What the accepted risk's percentile gains over the row before, a paired difference in share; null for the first. */
   gain: Figure | null;
@@ -139,7 +140,19 @@ export type SweepRow = {
   costPerYear: Figure;
 };
 
-export type Sweep = { bufferId: string; bufferName: string; unit: "units"; currentSize: number; rows: SweepRow[] };
+/** One number of a line over a range. Without `quantity` it is the size of a buffer; with it, that field of any node. */
+export type Sweep = {
+  /** Of the node; "line" for a number of the whole line. */
+  bufferId: string;
+  bufferName: string;
+  quantity?: string;
+  unit: SweepUnit;
+  currentSize: number;
+  rows: SweepRow[];
+};
+
+export const sweepUnits = ["units", "%", "days", "h", "min", ""] as const;
+export type SweepUnit = (typeof sweepUnits)[number];
 
 export type ShareKind = "version" | "comparison";
 

@@ -6,4 +6,5 @@ export { mergeRuns } from "./merge";
 export { arePaired, pairedDifference, pairedDifferences, type PairedDifferences } from "./paired";
 export { levelPercentile, percentile } from "./percentile";
 export { simulate } from "./simulate";
+export { stockNeeds, type StockNeeds } from "./stock-needs";
 export type * from "./types";

@@ -64,7 +64,7 @@ export async function improveSizes(
     // Each look round is at other weeks, so that none of them is fitted to for long.
     const nParts = Math.floor(problem.replications / looked);
     const sample: Sample = { ...whole, replications: looked, firstReplication: (round % nParts) * looked };
-    const { choices, from } = await lookRound(search, at, sample, trust, knowledge);
+    const { choices, from } = await lookRound(search, at, sample, trust, round % 2 === 1, knowledge);
     const { tried, price } = await tryLevels(search, choices, at, from, sample, accepted);
     // Beyond the accepted risk a set costs more than mending it would: a set a little too risky is often a better
     // place to go on from than a dear one within the risk.
@@ -87,6 +87,7 @@ async function lookRound(
   at: Reading,
   sample: Sample,
   trust: number,
+  looksUp: boolean,
   { likely, seen }: Knowledge,
 ): Promise<{ choices: Choice[]; from: Reading }> {
   const steps = tops.map((_, b) => {
@@ -98,7 +99,8 @@ async function lookRound(
   });
   const moves = tops.flatMap((top, b) => {
     const level = at.levels[b];
-    const to = level > 0 ? Math.max(0, level - steps[b]) : Math.min(top, steps[b]);
+    const isUp = level === 0 || (looksUp && level < top);
+    const to = isUp ? Math.min(top, level + steps[b]) : Math.max(0, level - steps[b]);
     return to === level ? [] : [{ b, levels: withLevel(at.levels, b, to) }];
   });
   const [from, ...moved] = await runs.read([at.levels, ...moves.map(({ levels }) => levels)], sample);

@@ -29,7 +29,7 @@ export const serialAssumptions = [
   "In each cycle a station is up with the same probability, whatever the others do and whatever it did before.",
   "Stoppages come by the clock; where they come with running time only, a line with little room makes somewhat more.",
   "Scrap leaves the line where it is made and takes no place.",
-  "Rows of more than two stations are estimated by aggregation, which is about one per cent off.",
+  "Rows of more than two stations are estimated by aggregation, which is one or two per cent off.",
 ] as const;
 
 /**

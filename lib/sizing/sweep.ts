@@ -2,47 +2,95 @@ import { limits, sayCount } from "@/lib/line/limits";
 import type { Figure } from "@/lib/simulation/types";
 import { nearestRound } from "./bounds";
 
+/** Values of one quantity, values of a second one beside it, and runs of both together at most. */
 export const mostSizes = 24;
+export const mostSeconds = 6;
+export const mostRuns = 48;
+
+/** What values of a quantity have to be, apart from what its line allows. */
+export type ValueKind = { isWhole: boolean; unit: string };
+
+/** Shares are shown and typed in per cent. */
+export const factorOf = ({ unit }: Pick<ValueKind, "unit">): number => (unit === "%" ? 100 : 1);
+
+type Listed = { sizes: number[] } | { refusal: string };
 
 /**
- * Sizes from `from` to `to` in equal steps, both ends included.
- * @returns The sizes ascending, or why the range is refused.
+ * Values from `from` to `to` in equal steps, both ends included.
+ * @returns The values ascending, or why the range is refused.
  */
 export function listRange(
   from: number | null,
   to: number | null,
   step: number | null,
-): { sizes: number[] } | { refusal: string } {
+  kind: ValueKind = sizeKind,
+): Listed {
   if (from === null || to === null || step === null)
     return { refusal: "Type where the range begins, where it ends and the step." };
-  if (![from, to, step].every(isSize)) return { refusal: sizeRule };
+  if (kind === sizeKind ? ![from, to, step].every(isSize) : ![from, to, step].every((value) => fits(value, kind)))
+    return { refusal: ruleOf(kind) };
+  if (!(step > 0)) return { refusal: "The step has to be above 0." };
   if (to < from) return { refusal: "The range has to end at or above where it begins." };
-  const n = Math.floor((to - from) / step) + 1;
-  if (n > mostSizes) return { refusal: `${sayCount(n)} sizes are too many: at most ${mostSizes}. Use a larger step.` };
-  const sizes = Array.from({ length: n }, (_, i) => from + i * step);
+  const n = Math.floor((to - from) / step + 1e-9) + 1;
+  if (n > mostSizes)
+    return { refusal: `${sayCount(n)} ${wordOf(kind)} are too many: at most ${mostSizes}. Use a larger step.` };
+  const sizes = Array.from({ length: n }, (_, i) => tidy(from + i * step));
   if (sizes[n - 1] < to && n < mostSizes) sizes.push(to);
   return { sizes };
 }
 
-/** Sizes typed by hand, parted by commas, semicolons or spaces; doubles count once. */
-export function readSizes(text: string): { sizes: number[] } | { refusal: string } {
+/**
+ * Values typed by hand, parted by commas, semicolons or spaces; doubles count once.
+ * @param most - Values at most.
+ */
+export function readSizes(text: string, kind: ValueKind = sizeKind, most = mostSizes): Listed {
   const parts = text.split(/[\s,;]+/).filter(Boolean);
-  if (parts.length === 0) return { refusal: "Type at least one size." };
-  const sizes = [...new Set(parts.map(Number))].sort((a, b) => a - b);
-  if (!sizes.every(isSize)) return { refusal: sizeRule };
-  if (sizes.length > mostSizes)
-    return { refusal: `${sayCount(sizes.length)} sizes are too many: at most ${mostSizes}.` };
+  const word = wordOf(kind);
+  if (parts.length === 0) return { refusal: `Type at least one ${word.slice(0, -1)}.` };
+  const typed = parts.map((part) => tidy(Number(part.replace(/%$/, "")) / factorOf(kind)));
+  const sizes = [...new Set(typed)].sort((a, b) => a - b);
+  if (!sizes.every((value) => (kind === sizeKind ? isSize(value) : fits(value, kind))))
+    return { refusal: ruleOf(kind) };
+  if (sizes.length > most) return { refusal: `${sayCount(sizes.length)} ${word} are too many: at most ${most}.` };
   return { sizes };
 }
 
+/** The size of a buffer. */
+export const sizeKind: ValueKind = { isWhole: true, unit: "units" };
 const isSize = (value: number) => Number.isInteger(value) && value >= 1 && value < limits.count;
-const sizeRule = `Sizes are whole numbers, 1 or more and below ${sayCount(limits.count)}.`;
+const fits = (value: number, { isWhole }: ValueKind) => (isWhole ? Number.isInteger(value) : Number.isFinite(value));
+const wordOf = (kind: ValueKind) => (kind === sizeKind ? "sizes" : "values");
+const tidy = (value: number) => Number(value.toPrecision(12));
 
-/** A range around a size: four round steps of about a tenth of it to either side. */
-export function suggestRange(size: number): { from: number; to: number; step: number } {
-  const step = nearestRound(size / 10);
-  const from = Math.max(1, size - Math.min(4, Math.floor((size - 1) / step)) * step);
-  return { from, to: size + 4 * step, step };
+function ruleOf(kind: ValueKind): string {
+  if (kind === sizeKind) return `Sizes are whole numbers, 1 or more and below ${sayCount(limits.count)}.`;
+  return kind.isWhole
+    ? "Values are whole numbers, parted by commas or spaces."
+    : "Values are numbers, parted by commas or spaces, with a decimal point.";
+}
+
+/** A range around a value: four round steps of about a tenth of it to either side; shares stay shares. */
+export function suggestRange(value: number, kind: ValueKind = sizeKind): { from: number; to: number; step: number } {
+  if (kind.isWhole) {
+    const least = kind === sizeKind ? 1 : 0;
+    const step = nearestRound(Math.max(1, value / 10));
+    const from = Math.max(least, value - Math.min(4, Math.floor((value - least) / step)) * step);
+    return { from, to: value + 4 * step, step };
+  }
+  const share = kind.unit === "%";
+  const step = value === 0 ? (share ? 0.01 : 1) : roundStep(Math.abs(value) / 10);
+  const from = tidy(Math.max(0, value - 4 * step));
+  const to = tidy(share && value <= 1 ? Math.min(1, value + 4 * step) : value + 4 * step);
+  return { from, to, step };
+}
+
+/** The 1, 2 or 5 of a power of ten closest to a value in ratio. */
+function roundStep(value: number): number {
+  const power = 10 ** Math.floor(Math.log10(value));
+  const distance = (step: number) => Math.max(step / value, value / step);
+  return tidy(
+    [1, 2, 5, 10].map((m) => m * power).reduce((best, step) => (distance(step) < distance(best) ? step : best)),
+  );
 }
 
 export type SizeFigures = { size: number; gain: Figure | null; moneyTiedUp: Figure };

@@ -1,6 +1,6 @@
 import { act, fireEvent, screen, waitFor, within } from "@testing-library/react";
 import { expect, it } from "vitest";
-import { SizeComparison } from "@/components/compare/size-comparison";
+import { SweepView } from "@/components/compare/sweep-view";
 import { SweepProvider } from "@/components/compare/sweep-store";
 import { ShareActionsContext } from "@/components/share/share-actions";
 import type { SimulationClient } from "@/lib/client/simulation-client";
@@ -37,7 +37,7 @@ function open(role: Role = "engineer", client?: SimulationClient, selection: str
   const all = (isShown: boolean) => (
     <ShareActionsContext value={shares}>
       <Probe />
-      <SweepProvider>{isShown && <SizeComparison />}</SweepProvider>
+      <SweepProvider>{isShown && <SweepView />}</SweepProvider>
     </ShareActionsContext>
   );
   renderLine({ role, client, actions, scenarios: [scenario], children: all(true) });
@@ -54,7 +54,7 @@ const firstBuffer = exampleDocument.nodes.find(({ kind }) => kind === "buffer")!
 
 it("suggests a range around the size as it is and counts its sizes", () => {
   open();
-  expect(screen.getByText("No sizes compared yet")).toBeTruthy();
+  expect(screen.getByText("Nothing compared yet")).toBeTruthy();
   expect(screen.getByRole("button", { name: /^Run \d+ sizes$/ })).toBeTruthy();
   fireEvent.change(screen.getByLabelText("Step"), { target: { value: "0" } });
   expect(screen.getByRole<HTMLButtonElement>("button", { name: "Run sizes" })).toBeTruthy();
@@ -126,7 +126,7 @@ it("says that the line has changed since", async () => {
   fireEvent.click(screen.getByRole("button", { name: "Run 1 size" }));
   await waitFor(() => expect(rowOf("1\u202f500")).toBeTruthy());
   act(() => probe.line.apply(setField("wind", "scrapRate", 0.05)));
-  expect(screen.getByText("The line has changed since these sizes were run.")).toBeTruthy();
+  expect(screen.getByText("The line has changed since these values were run.")).toBeTruthy();
 });
 
 it("compares nothing on a faulty line, and lets a viewer compare but keep nothing", async () => {

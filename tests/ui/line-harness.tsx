@@ -18,7 +18,7 @@ import {
   type VersionDetail,
 } from "@/lib/schema/lines";
 import type { Role } from "@/lib/schema/roles";
-import { simulate, type RunOptions, type RunResult } from "@/lib/simulation";
+import { simulate, stockNeeds, type RunOptions, type RunResult } from "@/lib/simulation";
 
 const at = "2026-11-24T14:02:00Z";
 const by = "Ines Kallweit";
@@ -95,6 +95,7 @@ export function createClient(isHeld: (hooks: RunHooks) => boolean = () => false)
     nWorkers: 1,
     run,
     runMany: (lines, options, hooks) => Promise.all(lines.map((line) => run(line, options, hooks))),
+    stockNeeds: async (line, options) => stockNeeds(line, options),
     lowestLevels: () => Promise.reject(new Error("not asked for here")),
     traceWeek: () => Promise.reject(new Error("not asked for here")),
     close: () => undefined,
