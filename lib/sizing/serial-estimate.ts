@@ -134,6 +134,8 @@ function estimate(line: Line, stations: Station[], bufferIds: readonly string[])
 
 const cycleOf = ({ cycleMinutes, parallel }: Station): number => cycleMinutes / parallel;
 
+/** The rounds of the aggregation grow with the square of the stations, and beyond this hold up the page. */
+const mostStations = 40;
 /** Stoppages beyond this many cycles are not single lost cycles. */
 const mostCycles = 3;
 /** Against exact chains and runs of three stations the estimate is then within about six per cent of the rate. */
@@ -144,6 +146,7 @@ const mostUnlike = 0.08;
  * vary, a unit waits for the next tick or holds its place longer: at one place that costs half of the output and more.
  */
 function refuse({ calendar: { tickMinutes } }: Line, stations: readonly Station[]): string | null {
+  if (stations.length > mostStations) return `it has more than ${mostStations} stations`;
   const cycle = cycleOf(stations[0]);
   if (stations.some((station) => Math.abs(cycleOf(station) - cycle) > 1e-9 * cycle))
     return "its stations have different cycle times";

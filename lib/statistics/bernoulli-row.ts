@@ -42,8 +42,8 @@ export function rowRate(row: BernoulliRow, places: readonly number[]): number {
   return aggregate(row, places, () => false);
 }
 
-const mostRounds = 100_000;
-const precision = 1e-12;
+const mostRounds = 10_000;
+const precision = 1e-11;
 
 /**
  * Rounds of the aggregation until the rate at the head, which rises, and that at the end, which falls, have met or
