@@ -10,9 +10,8 @@ const row = 22;
 /** Risk on the search's weeks and on weeks it has not seen, against the accepted one. */
 export function ConfirmRuler({ rows, acceptedRisk }: { rows: readonly Confirmation[]; acceptedRisk: number }) {
   const ends = rows.flatMap(({ risk }) => [risk.value - (risk.halfWidth ?? 0), risk.value + (risk.halfWidth ?? 0)]);
-  const step = [0.005, 0.01, 0.02, 0.05, 0.1].find(
-    (one) => (Math.max(acceptedRisk, ...ends) - Math.min(acceptedRisk, ...ends)) / one <= 5,
-  )!;
+  const span = Math.max(acceptedRisk, ...ends) - Math.min(acceptedRisk, ...ends);
+  const step = [0.005, 0.01, 0.02, 0.05, 0.1].find((one) => span / one <= 5) ?? 0.2;
   const from = Math.max(0, Math.floor((Math.min(acceptedRisk, ...ends) - step / 4) / step) * step);
   const to = Math.ceil((Math.max(acceptedRisk, ...ends) + step / 4) / step) * step;
   const x = (share: number) => 6 + ((share - from) / (to - from)) * 190;

@@ -6,7 +6,7 @@ import type { SizingSearch } from "@/lib/client/use-sizing";
 import { formatChosenPercent, formatCount, formatNumber, formatShare, withSign } from "@/lib/format";
 import type { Line } from "@/lib/line/types";
 import type { FrontierPoint } from "@/lib/sizing";
-import { leanShare, serialParts } from "@/lib/sizing/serial-parts";
+import { estimateSerialParts, leanShare, serialAssumptions } from "@/lib/sizing/serial-estimate";
 import { averageSizes, differencesFrom, textbookAssumptions, textbookSizes } from "@/lib/sizing/textbook";
 
 /** The textbook's safety stock and the plan on averages beside what the simulation finds, and why they differ. */
@@ -136,9 +136,9 @@ export function FormulaTable({ search, point }: { search: SizingSearch; point: F
       <div className="caution mt-3 max-w-[90ch] space-y-1">
         {textbook && (
           <p>
-            Textbook sizes (mean use over lead time, review and lateness, plus {formatNumber(zOf(rows), 2)} standard
-            deviations), run in this line: they miss {formatChosenPercent(problem.targetFillRate)} in{" "}
-            <Risk result={textbook.result} /> of weeks.
+            Textbook sizes (mean use over lead time, lateness and, for order-up-to levels, review, plus{" "}
+            {formatNumber(zOf(rows), 2)} standard deviations), run in this line: they miss{" "}
+            {formatChosenPercent(problem.targetFillRate)} in <Risk result={textbook.result} /> of weeks.
           </p>
         )}
         {averages && (
@@ -152,9 +152,9 @@ export function FormulaTable({ search, point }: { search: SizingSearch; point: F
       <details className="mt-2 text-s text-ink-2">
         <summary className="cursor-pointer text-water-700">What the formula takes for granted</summary>
         <p className="mt-1">
-          Safety stock = z √(L s<sub>D</sub>² + D² s<sub>L</sub>²); L: lead time, review period and mean lateness, D and
-          s<sub>D</sub>: use a day and its standard deviation, s<sub>L</sub>: standard deviation of the lead time (small
-          figures behind ±), z: normal quantile of the accepted risk.
+          Safety stock = z √(L s<sub>D</sub>² + D² s<sub>L</sub>²); L: lead time, mean lateness and, for order-up-to
+          levels, the review period, D and s<sub>D</sub>: use a day and its standard deviation, s<sub>L</sub>: standard
+          deviation of the lead time (small figures behind ±), z: normal quantile of the accepted risk.
         </p>
         <ul className="mt-1 list-disc pl-5">
           {textbookAssumptions.map((text) => (
@@ -189,7 +189,7 @@ function Risk({ result }: { result: NonNullable<SizingSearch["textbook"]>["resul
 
 /** Serial parts of the line with the Bernoulli estimate, or why it does not apply. */
 function SerialParts({ line }: { line: Line }) {
-  const parts = useMemo(() => serialParts(line), [line]);
+  const parts = useMemo(() => estimateSerialParts(line), [line]);
   const nameOf = (id: string) => line.nodes.find((node) => node.id === id)?.name ?? id;
   if (parts.length === 0) return null;
   return (
@@ -197,18 +197,17 @@ function SerialParts({ line }: { line: Line }) {
       <h3 className="figure-title">Serial parts by the Bernoulli line</h3>
       <ul className="mt-1 max-w-[90ch] space-y-1">
         {parts.map(({ stations, buffers, estimate }) => (
-          <li key={stations.join()}>
-            {stations.map(nameOf).join(" → ")}:{" "}
+          <li key={buffers.join()}>
+            {stations.map(nameOf).join(estimate.applies ? " → " : ", ")} over {buffers.map(nameOf).join(", ")}:{" "}
             {estimate.applies ? (
               <>
-                about {formatNumber(estimate.perHour, 1)} good units an hour with {buffers.map(nameOf).join(", ")} as
-                they are, {formatNumber(estimate.perHourEndless, 1)} with endless room
-                {estimate.leanPlaces !== null &&
-                  `; ${formatCount(estimate.leanPlaces)} places each give ${formatChosenPercent(leanShare)} of that`}
-                .{" "}
-                <span className="text-s text-ink-3">
-                  The estimate knows stoppages and room, no parts and no demand.
-                </span>
+                about {formatNumber(estimate.perHour, 1)} good units an hour with the sizes as they are,{" "}
+                {formatNumber(estimate.perHourEndless, 1)} with endless room; {formatChosenPercent(leanShare)} of that
+                takes{" "}
+                {estimate.lean
+                  .map(({ id, size, lean }) => `${nameOf(id)} ${formatCount(lean)} (now ${formatCount(size)})`)
+                  .join(", ")}
+                .
               </>
             ) : (
               <span className="text-ink-2">no estimate, since {estimate.reason}.</span>
@@ -216,6 +215,16 @@ function SerialParts({ line }: { line: Line }) {
           </li>
         ))}
       </ul>
+      {parts.some(({ estimate }) => estimate.applies) && (
+        <details className="mt-1 text-s text-ink-2">
+          <summary className="cursor-pointer text-water-700">What the estimate takes for granted</summary>
+          <ul className="mt-1 list-disc pl-5">
+            {serialAssumptions.map((text) => (
+              <li key={text}>{text}</li>
+            ))}
+          </ul>
+        </details>
+      )}
     </section>
   );
 }

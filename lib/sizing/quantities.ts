@@ -135,10 +135,11 @@ function measureOf(path: string): Pick<Quantity, "unit" | "isWhole"> {
   const [head, last] = [path.split(".")[0], path.slice(path.lastIndexOf(".") + 1)];
   const isSpan = last !== "shape" && path.includes(".");
   const unit = units.find(([, keys]) => keys.includes(last))?.[0];
-  if (unit) return { unit, isWhole: whole.includes(last) };
+  const isWhole = whole.includes(last);
+  if (unit) return { unit, isWhole };
   if (head === "lateness" && isSpan) return { unit: "days", isWhole: false };
   if (head === "weeklyDemand" && isSpan) return { unit: "units", isWhole: false };
-  return { unit: "", isWhole: false };
+  return { unit: "", isWhole };
 }
 
 function setAt(from: unknown, [key, ...rest]: string[], value: number): unknown {

@@ -44,10 +44,13 @@ export function listRange(
  * @param most - Values at most.
  */
 export function readSizes(text: string, kind: ValueKind = sizeKind, most = mostSizes): Listed {
-  const parts = text.split(/[\s,;]+/).filter(Boolean);
+  const parts = text
+    .replaceAll("%", " ")
+    .split(/[\s,;]+/)
+    .filter(Boolean);
   const word = wordOf(kind);
   if (parts.length === 0) return { refusal: `Type at least one ${word.slice(0, -1)}.` };
-  const typed = parts.map((part) => tidy(Number(part.replace(/%$/, "")) / factorOf(kind)));
+  const typed = parts.map((part) => tidy(Number(part) / factorOf(kind)));
   const sizes = [...new Set(typed)].sort((a, b) => a - b);
   if (!sizes.every((value) => (kind === sizeKind ? isSize(value) : fits(value, kind))))
     return { refusal: ruleOf(kind) };
