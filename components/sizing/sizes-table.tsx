@@ -95,7 +95,7 @@ export function SizesTable({ search, point }: { search: SizingSearch; point: Fro
           </tbody>
           <tfoot>
             <tr className="border-t border-ink font-[620]">
-              <th scope="row" className="text-left">
+              <th scope="row" className="border-b-0! text-left font-[620]!">
                 Tied up, {currency}
               </th>
               <td className="text-right">{money(today?.result)}</td>

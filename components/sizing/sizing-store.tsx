@@ -70,7 +70,6 @@ export function SizingProvider({ children }: { children: ReactNode }) {
         return { sizes, result };
       };
       try {
-        if (!first.today) show({ today: await runSet(sizesToday(problem.line)) });
         let others: Promise<void> | null = null;
         await findSizes(
           problem,
@@ -78,8 +77,9 @@ export function SizingProvider({ children }: { children: ReactNode }) {
           ({ share, evaluations, best, frontier, checkpoint: reached }) => {
             if (!signal.aborted) checkpoint.current = reached;
             show({ share, evaluations: first.evaluations + evaluations, best, frontier });
-            if (frontier.length > 0 && !first.textbook)
-              others ??= runFormulas(problem.line, first.options.acceptedRisk, runSet, show);
+            // What is found first must not wait for what it is held against.
+            if (frontier.length > 0 && !first.averages)
+              others ??= runOthers(problem.line, first.options.acceptedRisk, runSet, show);
           },
           { signal, resume },
         );
@@ -185,7 +185,7 @@ export function SizingProvider({ children }: { children: ReactNode }) {
   return <SizingContext value={state}>{children}</SizingContext>;
 }
 
-async function runFormulas(
+async function runOthers(
   line: Line,
   acceptedRisk: number,
   runSet: (sizes: Record<string, number>) => Promise<OtherSet>,
@@ -193,6 +193,7 @@ async function runFormulas(
 ): Promise<void> {
   const textbook = textbookSizes(line, acceptedRisk).flatMap((one) => (one.applies ? [[one.id, one.size]] : []));
   const today = sizesToday(line);
+  show({ today: await runSet(today) });
   if (textbook.length > 0) show({ textbook: await runSet({ ...today, ...Object.fromEntries(textbook) }) });
   const averages = averageSizes(line);
   if (Object.keys(averages).length > 0) show({ averages: await runSet({ ...today, ...averages }) });

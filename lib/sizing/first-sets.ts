@@ -3,6 +3,8 @@ import { lowShares, type Reading, type Search } from "./runs";
 
 /** Shares of their range at which buffers between stations are tried. */
 const betweenShares = [0.1, 0.2, 0.35, 0.5, 0.75];
+/** Of the shares of days in which purchased stock may run dry, the first so many; with more, no set keeps to a risk. */
+const nLowShares = 4;
 /** Halvings of the range of the stock that customers draw on. */
 const nHalvings = 5;
 /** First sets run over all weeks. */
@@ -23,7 +25,7 @@ export async function findFirstSet(search: Search, ample: Reading, accepted: num
   /** What is halved: the stock customers draw on, else the stock between stations. */
   const halved = has("last") ? "last" : "between";
   const between = has("between") && halved === "last" ? betweenShares : [1];
-  const bought = has("bought") ? lowShares.map((_, i) => i) : [0];
+  const bought = has("bought") ? lowShares.map((_, i) => i).slice(0, nLowShares) : [0];
   const starts = between.flatMap((share) => bought.map((low) => ({ share, low })));
   const setAt = ({ share, low }: (typeof starts)[number], part: number): Levels =>
     tops.map((top, b) => {

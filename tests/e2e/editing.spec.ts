@@ -1,6 +1,5 @@
-import AxeBuilder from "@axe-core/playwright";
 import { expect, test } from "@playwright/test";
-import { lineIdOf, makeLine, openLine, signIn, watch } from "./helpers";
+import { expectAccessible, lineIdOf, makeLine, openLine, signIn, watch } from "./helpers";
 
 test("draws a line of one's own from nothing by keyboard and forms until it runs", async ({ page }) => {
   const { expectQuiet } = watch(page);
@@ -133,14 +132,14 @@ test("the views of a line are accessible, light and dark, wide and narrow", asyn
   const id = lineIdOf(page);
   for (const scheme of ["light", "dark"] as const) {
     await page.emulateMedia({ colorScheme: scheme });
-    for (const path of ["sketch", "sketch?view=table", "readings", "compare"]) {
+    for (const path of ["sketch", "sketch?view=table", "readings", "compare", "sizing"]) {
       await page.goto(`/lines/${id}/${path}`);
       await expect(page.getByText(/weeks we ship at least/).first()).toBeVisible();
       await expectAccessible(page);
     }
   }
   await page.setViewportSize({ width: 390, height: 844 });
-  for (const path of ["sketch", "readings", "compare"]) {
+  for (const path of ["sketch", "readings", "compare", "sizing"]) {
     await page.goto(`/lines/${id}/${path}`);
     await expect(page.getByText(/weeks we ship at least/).first()).toBeVisible();
     await expectAccessible(page);
@@ -149,8 +148,3 @@ test("the views of a line are accessible, light and dark, wide and narrow", asyn
   }
   expectQuiet();
 });
-
-async function expectAccessible(page: import("@playwright/test").Page) {
-  const { violations } = await new AxeBuilder({ page }).withTags(["wcag2a", "wcag2aa", "wcag21aa"]).analyze();
-  expect(violations.map(({ id, nodes }) => `${id}: ${nodes[0]?.html}`)).toEqual([]);
-}

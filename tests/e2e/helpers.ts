@@ -1,3 +1,4 @@
+import AxeBuilder from "@axe-core/playwright";
 import { expect, type Page } from "@playwright/test";
 import { demoPasswords } from "./demo-passwords";
 
@@ -41,3 +42,9 @@ export function headline(page: Page) {
 }
 
 export const lineIdOf = (page: Page) => /\/lines\/([^/]+)/.exec(page.url())?.[1] ?? "";
+
+/** Nothing on the page that WCAG 2.1 A or AA forbids, as far as axe can see. */
+export async function expectAccessible(page: Page): Promise<void> {
+  const { violations } = await new AxeBuilder({ page }).withTags(["wcag2a", "wcag2aa", "wcag21aa"]).analyze();
+  expect(violations.map(({ id, nodes }) => `${id}: ${nodes[0]?.html}`)).toEqual([]);
+}
