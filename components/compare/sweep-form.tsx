@@ -126,7 +126,7 @@ export function SweepForm() {
             </Button>
           </>
         ) : (
-          <Button kind="bare" size="small" onClick={() => setSecond({ node: null, path: "", text: "" })}>
+          <Button kind="bare" size="small" onClick={() => setSecond({ ...otherThan(parsed, first), text: "" })}>
             Vary a second number as well
           </Button>
         )}
@@ -178,6 +178,11 @@ function chooseQuantity(line: Line, chosen: Chosen | null): Quantity | null {
   }
   const [first] = variedNodes(line).filter(({ id }) => quantitiesOf(line, id).length > 0);
   return first ? (quantitiesOf(line, first.id)[0] ?? null) : null;
+}
+
+/** What to vary beside a quantity at first: all demand, or the first buffer where that is varied already. */
+function otherThan(line: Line, { node }: Quantity): Chosen {
+  return node === null ? { node: variedNodes(line)[0].id, path: "" } : { node: null, path: "" };
 }
 
 function exampleOf(line: Line, quantity: Quantity): string {

@@ -58,7 +58,7 @@ export function SizingProvider({ children }: { children: ReactNode }) {
       const show = (next: Partial<SizingSearch>) => {
         if (signal.aborted) return;
         const spentMs = first.spentMs + performance.now() - startedAt;
-        setSearch((now) => (now === null ? now : { ...now, ...next, spentMs }));
+        setSearch((now) => (now === null ? now : { ...now, ...next, ...furthest(now, next), spentMs }));
       };
       setSearch({ ...first, status: "running", error: null });
       const evaluate = createEvaluate(client, signal);
@@ -70,20 +70,21 @@ export function SizingProvider({ children }: { children: ReactNode }) {
         return { sizes, result };
       };
       try {
-        let others: Promise<void> | null = null;
+        // What is found first must not wait for what it is held against. Settles with what it failed with.
+        let others: Promise<unknown> | null = null;
         await findSizes(
           problem,
           evaluate,
           ({ share, evaluations, best, frontier, checkpoint: reached }) => {
             if (!signal.aborted) checkpoint.current = reached;
             show({ share, evaluations: first.evaluations + evaluations, best, frontier });
-            // What is found first must not wait for what it is held against.
             if (frontier.length > 0 && !first.averages)
-              others ??= runOthers(problem.line, first.options.acceptedRisk, runSet, show);
+              others ??= runOthers(problem.line, first.options.acceptedRisk, runSet, show).catch((error) => error);
           },
           { signal, resume },
         );
-        if (others) await others;
+        const failed = await others;
+        if (failed) throw failed;
         show({ status: "done", share: 1 });
       } catch (error) {
         show({ status: "failed", error: describeError(error) });
@@ -183,6 +184,14 @@ export function SizingProvider({ children }: { children: ReactNode }) {
   );
 
   return <SizingContext value={state}>{children}</SizingContext>;
+}
+
+/** A search that goes on repeats from its checkpoint what it had come to; the page does not go back with it. */
+function furthest(now: SizingSearch, { frontier = [], share = 0 }: Partial<SizingSearch>) {
+  return {
+    frontier: frontier.length < now.frontier.length ? now.frontier : frontier,
+    share: Math.max(now.share, share),
+  };
 }
 
 async function runOthers(

@@ -48,8 +48,8 @@ test("an engineer finds the cheapest set, keeps it, holds it against today's and
   await page.getByRole("option", { name: /^Whole line/ }).click();
   await page.getByRole("button", { name: "Vary a second number as well" }).click();
   await page.getByRole("radio", { name: "By hand" }).click();
-  await page.getByRole("textbox", { name: "Values, %" }).fill("95 100 105");
-  await page.getByRole("textbox", { name: /^at up to 6 values/ }).fill("100, 2000");
+  await page.getByRole("textbox", { name: "Values, %", exact: true }).fill("95 100 105");
+  await page.getByRole("textbox", { name: "at up to 6 values, units" }).fill("2000, 2800");
   await page.getByRole("button", { name: "Run 6 values" }).click();
   await expect(page.getByText("6 of 6 pairs run")).toBeVisible({ timeout: 60_000 });
   await expectAccessible(page);
