@@ -1,4 +1,4 @@
-import { formatNumber, formatPoints } from "@/lib/format";
+import { formatNumber, formatPoints, withSign } from "@/lib/format";
 import type { Figure } from "@/lib/simulation/types";
 import { Whisker } from "./whisker";
 
@@ -35,7 +35,7 @@ export function DifferenceAxis({ figure, scale: { from, to, step }, label, hasAx
             <g key={tick}>
               <path d={`M${x(tick)} 17v6`} stroke="var(--ink)" />
               <text x={x(tick)} y="12" textAnchor="middle" className="axis-text">
-                {tick > 0 ? `+${formatNumber(tick, step < 1 ? 1 : 0)}` : formatNumber(tick, step < 1 ? 1 : 0)}
+                {tick === 0 ? "0" : withSign(formatNumber(tick, step < 1 ? 1 : 0))}
               </text>
             </g>
           ))}

@@ -1,5 +1,4 @@
 import { percentileName } from "@/lib/format";
-import { percentile } from "@/lib/simulation";
 import type { Figure } from "@/lib/simulation/types";
 import type { Compared } from "./scenario-rows";
 
@@ -11,7 +10,7 @@ export function comparisonRows(rows: readonly Compared[], acceptedRisk: number, 
   const pair = (figure: Figure | undefined): Cell[] => [figure?.value ?? null, figure?.halfWidth ?? null];
   const figures: [string, (row: Compared) => Figure | undefined][] = [
     ["P5", ({ result }) => result?.summary.p05],
-    [name, ({ result }) => (result ? percentile(result, acceptedRisk) : undefined)],
+    [name, ({ atRisk }) => atRisk ?? undefined],
     ["P50", ({ result }) => result?.summary.p50],
     ["risk", ({ result }) => result?.summary.risk],
     ["capital tied up", ({ result }) => result?.summary.moneyTiedUp],

@@ -13,7 +13,6 @@ import {
   withSign,
 } from "@/lib/format";
 import { differences as listDifferences } from "@/lib/line/diff";
-import { percentile } from "@/lib/simulation";
 import type { Figure, RunResult } from "@/lib/simulation/types";
 import { sayDifference } from "./say-difference";
 import { comparisonColumns, type Compared } from "./scenario-rows";
@@ -30,7 +29,7 @@ type Props = {
 
 /** One scenario: what differs, its percentiles, its paired difference to the base, its money. */
 export function ScenarioRow({ row, base, acceptedRisk, from, scale, most, isReading }: Props) {
-  const { detail, result, differences, letter, isOwn } = row;
+  const { detail, result, atRisk, differences, letter, isOwn } = row;
   const isBase = base?.detail.id === detail.id;
   const { currency } = detail.kept.document.money;
   return (
@@ -50,18 +49,18 @@ export function ScenarioRow({ row, base, acceptedRisk, from, scale, most, isRead
           <Differs from={base} to={row} isBase={isBase} />
         </div>
       </div>
-      {result ? (
+      {result && atRisk ? (
         <>
           <div>
             <FillRateRuler
               p05={result.summary.p05.value}
-              atRisk={percentile(result, acceptedRisk)}
+              atRisk={atRisk}
               p50={result.summary.p50.value}
               acceptedRisk={acceptedRisk}
               from={from}
               hasWhisker
             />
-            <FillRateFigures result={result} acceptedRisk={acceptedRisk} />
+            <FillRateFigures result={result} atRisk={atRisk} acceptedRisk={acceptedRisk} />
           </div>
           <div>
             {differences ? (
@@ -118,10 +117,18 @@ export function ScenarioRow({ row, base, acceptedRisk, from, scale, most, isRead
   );
 }
 
-function FillRateFigures({ result, acceptedRisk }: { result: RunResult; acceptedRisk: number }) {
+function FillRateFigures({
+  result,
+  atRisk,
+  acceptedRisk,
+}: {
+  result: RunResult;
+  atRisk: Figure;
+  acceptedRisk: number;
+}) {
   const figures: [string, Figure][] = [
     ["P5", result.summary.p05],
-    [percentileName(acceptedRisk), percentile(result, acceptedRisk)],
+    [percentileName(acceptedRisk), atRisk],
     ["P50", result.summary.p50],
     ["risk", result.summary.risk],
   ];

@@ -15,6 +15,7 @@ import { areSameRun } from "@/lib/client/readings";
 import { type KeptRun, useKeptRuns } from "@/lib/client/use-kept-runs";
 import { formatCount, percentileName, plural } from "@/lib/format";
 import { pairedDifferences, type PairedDifferences, percentile } from "@/lib/simulation";
+import type { Figure } from "@/lib/simulation/types";
 import { CauseTable } from "./cause-table";
 import { comparisonRows } from "./comparison-rows";
 import { ScenarioRow } from "./scenario-row";
@@ -22,7 +23,8 @@ import { ScenarioRow } from "./scenario-row";
 /** Scenarios on one scale at most. */
 export const mostCompared = 6;
 
-export type Compared = KeptRun & { letter: string; differences: PairedDifferences | null };
+/** `atRisk`: the accepted risk's percentile, null without a run. */
+export type Compared = KeptRun & { letter: string; atRisk: Figure | null; differences: PairedDifferences | null };
 
 /** Scenarios of the line as kept, over the same weeks, each held against one of them. */
 export function ScenarioRows() {
@@ -50,6 +52,7 @@ export function ScenarioRows() {
         return {
           ...run,
           letter: String.fromCharCode(65 + i),
+          atRisk: run.result && percentile(run.result, acceptedRisk),
           differences: isPair ? pairedDifferences(run.result!, base.result!, acceptedRisk) : null,
         };
       }),
@@ -58,7 +61,7 @@ export function ScenarioRows() {
   const nMissing = rows.filter(({ result, line: own }) => result === null && own !== null).length;
   const scale = differenceScale(rows.flatMap(({ differences }) => (differences ? [differences.atRisk] : [])));
   const from = rulerStart(
-    ...rows.flatMap(({ result }) => (result ? [result.summary.p05.value, percentile(result, acceptedRisk).value] : [])),
+    ...rows.flatMap(({ result, atRisk }) => (result && atRisk ? [result.summary.p05.value, atRisk.value] : [])),
   );
   const mostMoney = Math.max(1, ...rows.map(({ result }) => result?.summary.moneyTiedUp.value ?? 0));
   const mostCost = Math.max(1, ...rows.map(({ result }) => result?.summary.costPerYear.total.value ?? 0));

@@ -7,13 +7,13 @@ import { Pick } from "@/components/ui/pick";
 import { toast } from "@/components/ui/toast";
 import { useLine } from "@/lib/client/line-state";
 import { formatCount, formatMoneyFigure, formatShare, type FigureText, percentileName } from "@/lib/format";
-import { percentile } from "@/lib/simulation";
+import type { SweepRow } from "@/lib/schema/lines";
 import type { Figure } from "@/lib/simulation/types";
 import { KeepValueDialog } from "./keep-value-dialog";
-import { countAsked, type SweepReading, type SweepRun } from "./sweep-store";
+import { countAsked, type SweepReading, type SweepRun, toRow } from "./sweep-store";
 import { showBare, showValue } from "./sweep-values";
 
-type Measure = { name: string; read(entry: SweepReading): Figure; show(figure: Figure): FigureText };
+type Measure = { name: string; read(row: SweepRow): Figure; show(figure: Figure): FigureText };
 
 /** Two numbers at once: a table of every pair, and the percentile as lines. */
 export function SweepGrid({ run }: { run: SweepRun }) {
@@ -24,16 +24,16 @@ export function SweepGrid({ run }: { run: SweepRun }) {
   const name = percentileName(acceptedRisk);
   const currency = document.money.currency ?? "";
   const measures: Measure[] = [
-    { name, read: ({ reading }) => percentile(reading.result, acceptedRisk), show: formatShare },
-    { name: "Risk", read: ({ reading }) => reading.result.summary.risk, show: formatShare },
+    { name, read: ({ atRisk }) => atRisk, show: formatShare },
+    { name: "Risk", read: ({ risk }) => risk, show: formatShare },
     {
       name: `Capital, ${currency}`,
-      read: ({ reading }) => reading.result.summary.moneyTiedUp,
+      read: ({ moneyTiedUp }) => moneyTiedUp,
       show: formatMoneyFigure,
     },
     {
       name: `Cost a year, ${currency}`,
-      read: ({ reading }) => reading.result.summary.costPerYear.total,
+      read: ({ costPerYear }) => costPerYear,
       show: formatMoneyFigure,
     },
   ];
@@ -41,11 +41,12 @@ export function SweepGrid({ run }: { run: SweepRun }) {
   const { first, second, readings } = run;
   if (!second) return null;
   const at = (value: number, beside: number) => readings.find((one) => one.value === value && one.beside === beside);
+  const rowOf = ({ value, reading }: SweepReading) => toRow(value, reading.result, null, acceptedRisk);
   const head = (varied: typeof first) => `${varied.nodeName}: ${varied.quantity.name}`;
   const lines = second.values.flatMap((beside) => {
     const points = first.values.flatMap((value) => {
       const entry = at(value, beside);
-      return entry ? [{ value, share: percentile(entry.reading.result, acceptedRisk).value }] : [];
+      return entry ? [{ value, share: rowOf(entry).atRisk.value }] : [];
     });
     return points.length > 0 ? [{ key: String(beside), name: showValue(beside, second.quantity.unit), points }] : [];
   });
@@ -72,7 +73,7 @@ export function SweepGrid({ run }: { run: SweepRun }) {
               ...readings.map((entry) => [
                 entry.value,
                 entry.beside,
-                ...measures.flatMap((one) => [one.read(entry).value, one.read(entry).halfWidth]),
+                ...measures.flatMap((one) => [one.read(rowOf(entry)).value, one.read(rowOf(entry)).halfWidth]),
               ]),
             ]}
           />
@@ -108,7 +109,7 @@ export function SweepGrid({ run }: { run: SweepRun }) {
                   </th>
                   {second.values.map((beside) => {
                     const entry = at(value, beside);
-                    const text = entry && measure.show(measure.read(entry));
+                    const text = entry && measure.show(measure.read(rowOf(entry)));
                     return (
                       <td key={beside} className="text-right whitespace-nowrap">
                         {!entry || !text ? (

@@ -105,8 +105,21 @@ export function countAsked({ first, second }: Pick<SweepRun, "first" | "second">
   return first.values.length * (second?.values.length ?? 1);
 }
 
+type KnownRow = { before: RunResult | null; acceptedRisk: number; row: SweepRow };
+
+/** Percentiles sort all weeks: worked out once, since a running sweep is shown many times a second. */
+const knownRows = new WeakMap<RunResult, KnownRow>();
+
 /** The figures of one value that tables, charts and links show. */
 export function toRow(size: number, result: RunResult, before: RunResult | null, acceptedRisk: number): SweepRow {
+  const known = knownRows.get(result);
+  if (known && known.before === before && known.acceptedRisk === acceptedRisk) return known.row;
+  const row = readRow(size, result, before, acceptedRisk);
+  knownRows.set(result, { before, acceptedRisk, row });
+  return row;
+}
+
+function readRow(size: number, result: RunResult, before: RunResult | null, acceptedRisk: number): SweepRow {
   const { p05, p10, p50, risk, moneyTiedUp, costPerYear } = result.summary;
   return {
     size,

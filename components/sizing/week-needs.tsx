@@ -167,9 +167,9 @@ export function WeekNeeds() {
   );
 }
 
-/** A need that reaches the size may be more where the size bounds what can be seen. */
+/** A need of the whole size may be more where the size bounds what can be seen; what is owed on top is seen. */
 function sayNeed(units: number, size: number, isOpenEnded: boolean): string {
-  return !isOpenEnded && units >= size ? `${formatCount(units)} or more` : formatCount(units);
+  return !isOpenEnded && units === size ? `${formatCount(units)} or more` : formatCount(units);
 }
 
 function sayChart({ days, weeks }: BufferNeed, span: "week" | "year", name: string, times: string): string {

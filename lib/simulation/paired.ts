@@ -1,7 +1,7 @@
 import { pickQuantile } from "@/lib/statistics/quantile";
 import { sectionHalfWidth } from "@/lib/statistics/sections";
 import type { Sectioned } from "./figures";
-import { addUnits, sectionWeeks, type Weeks } from "./rates";
+import { addUnits, sectionWeeks, sortedRates } from "./rates";
 import { sumSections } from "./summarise";
 import { readMoney } from "./summary";
 import type { Figure, RunResult } from "./types";
@@ -36,11 +36,14 @@ export function arePaired(a: RunResult, b: RunResult): boolean {
  * @remarks Common random numbers with sectioning; Asmussen and Glynn, Stochastic Simulation (2007), chapters III.5 and V.
  */
 export function pairedDifferences(edited: RunResult, base: RunResult, p: number): PairedDifferences {
-  const [weeksA, weeksB] = pairWeeks(edited, base);
+  requirePair(edited, base);
+  const [weeksA, weeksB] = [edited, base].map(({ tallies, options }) =>
+    sectionWeeks(addUnits(tallies, -1), options.targetFillRate),
+  );
   const [sumsA, sumsB] = [sumSections(edited.tallies), sumSections(base.tallies)];
   const [moneyA, moneyB] = [edited, base].map(({ tallies, options }) => readMoney(tallies.shape, options.weeks));
   return {
-    atRisk: differ(weeksA, weeksB, (weeks) => quantileOf(weeks, p)),
+    atRisk: pairedDifference(edited, base, p),
     mean: differ(weeksA, weeksB, ({ rates }) => rates.reduce((sum, rate) => sum + rate, 0) / rates.length),
     risk: differ(weeksA, weeksB, ({ rates, below }) => below / rates.length),
     moneyTiedUp: differ(sumsA, sumsB, moneyA.moneyTiedUp, moneyB.moneyTiedUp),
@@ -50,22 +53,17 @@ export function pairedDifferences(edited: RunResult, base: RunResult, p: number)
 
 /** The same for a percentile of the weekly fill rate alone. */
 export function pairedDifference(edited: RunResult, base: RunResult, p: number): Figure {
-  const [weeksA, weeksB] = pairWeeks(edited, base);
-  return differ(weeksA, weeksB, (weeks) => quantileOf(weeks, p));
+  requirePair(edited, base);
+  const [ratesA, ratesB] = [edited, base].map(({ tallies }) => sortedRates(tallies, -1));
+  return differ(ratesA, ratesB, (rates) => pickQuantile(rates, p));
 }
 
-function pairWeeks(edited: RunResult, base: RunResult): [Sectioned<Weeks>, Sectioned<Weeks>] {
-  if (!arePaired(edited, base)) {
-    const say = ({ options: { seed, replications, weeks } }: RunResult) =>
-      `${replications} x ${weeks} weeks, seed phrase "${seed}"`;
-    throw new RangeError(`runs of ${say(edited)} and ${say(base)} are no pair`);
-  }
-  return [weeksOf(edited), weeksOf(base)];
+function requirePair(edited: RunResult, base: RunResult): void {
+  if (arePaired(edited, base)) return;
+  const say = ({ options: { seed, replications, weeks } }: RunResult) =>
+    `${replications} x ${weeks} weeks, seed phrase "${seed}"`;
+  throw new RangeError(`runs of ${say(edited)} and ${say(base)} are no pair`);
 }
-
-const weeksOf = ({ tallies, options }: RunResult) => sectionWeeks(addUnits(tallies, -1), options.targetFillRate);
-
-const quantileOf = ({ rates }: Weeks, p: number): number => pickQuantile(rates.slice().sort(), p);
 
 function differ<T>(
   a: Sectioned<T>,

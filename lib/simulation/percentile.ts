@@ -1,5 +1,6 @@
-import { pickCountedQuantile } from "@/lib/statistics/quantile";
-import { addUnits, rateQuantiles, sectionWeeks } from "./rates";
+import { pickCountedQuantile, pickQuantile } from "@/lib/statistics/quantile";
+import { figureOf } from "./figures";
+import { sortedRates } from "./rates";
 import type { Figure, RunResult } from "./types";
 
 /**
@@ -9,11 +10,11 @@ import type { Figure, RunResult } from "./types";
  */
 export function percentile(result: RunResult, p: number, customerId?: string): Figure {
   if (!(p >= 0 && p <= 1)) throw new RangeError(`p must be from 0 to 1, got ${p}`);
-  const { tallies, options } = result;
+  const { tallies } = result;
   const customer =
     customerId === undefined ? -1 : tallies.shape.customers.findIndex((candidate) => candidate.id === customerId);
   if (customerId !== undefined && customer === -1) throw new RangeError(`no customer has the id "${customerId}"`);
-  return rateQuantiles(sectionWeeks(addUnits(tallies, customer), options.targetFillRate), [p])[0];
+  return figureOf(sortedRates(tallies, customer), (rates) => pickQuantile(rates, p));
 }
 
 /**

@@ -71,7 +71,27 @@ export function shareInFull(weeks: Sectioned<Weeks>): Figure {
 
 /** Percentiles of the weekly fill rates. */
 export function rateQuantiles(weeks: Sectioned<Weeks>, shares: number[]): Figure[] {
-  const sort = ({ rates }: Weeks): Float64Array => rates.slice().sort();
-  const sorted = { ...weeks, total: sort(weeks.total), sections: weeks.sections.map(sort) };
+  const sorted = sortRates(weeks);
   return shares.map((p) => figureOf(sorted, (rates) => pickQuantile(rates, p)));
+}
+
+function sortRates(weeks: Sectioned<Weeks>): Sectioned<Float64Array> {
+  const sort = ({ rates }: Weeks): Float64Array => rates.slice().sort();
+  return { ...weeks, total: sort(weeks.total), sections: weeks.sections.map(sort) };
+}
+
+const sortedBefore = new WeakMap<Tallies, Map<number, Sectioned<Float64Array>>>();
+
+/**
+ * Weekly fill rates ascending, over all replications and in each section. Kept with the tallies: pages read percentiles
+ * of one result many times a second while another runs.
+ * @param customer - Index; -1 for all customers together.
+ */
+export function sortedRates(tallies: Tallies, customer: number): Sectioned<Float64Array> {
+  const own = sortedBefore.get(tallies) ?? new Map<number, Sectioned<Float64Array>>();
+  sortedBefore.set(tallies, own);
+  // The target plays no part in the rates.
+  const sorted = own.get(customer) ?? sortRates(sectionWeeks(addUnits(tallies, customer), 0));
+  own.set(customer, sorted);
+  return sorted;
 }
