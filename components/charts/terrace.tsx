@@ -187,7 +187,7 @@ function Mark({
   width: number;
   currency: string;
 }) {
-  const isRight = x < width / 2;
+  const isRight = width - x > x - left;
   const at = isRight ? x + 11 : x - 11;
   const anchor = isRight ? "start" : "end";
   return (
