@@ -46,6 +46,7 @@ export default defineConfig([
     ".next/**",
     ".data/**",
     ".scratch*/**",
+    "public/worker/**",
     "coverage/**",
     "db/migrations/**",
     "test-results/**",
