@@ -24,9 +24,10 @@ const of = <K extends TraceEvent["kind"]>(trace: WeekTrace, kind: K) =>
   trace.events.filter((event): event is Extract<TraceEvent, { kind: K }> => event.kind === kind);
 
 describe("traceWeek", () => {
-  it("has the fill rates and lowest levels of the run itself", () => {
+  // Lamination stacks are counted in kits of the one station that takes them.
+  it.each(["stator", "lam"])("has the fill rates of the run itself, and the lowest levels of %s", (id) => {
     const run = simulate(exampleLine, options);
-    const lowest = lowestLevels(exampleLine, options, "stator");
+    const lowest = lowestLevels(exampleLine, options, id);
     for (const [replication, week] of [
       [0, 0],
       [2, 1],
@@ -34,7 +35,7 @@ describe("traceWeek", () => {
     ]) {
       const trace = traceWeek(exampleLine, options, replication, week);
       expect(fillRate(trace)).toBe(run.fillRates[replication * options.weeks + week]);
-      const { levels } = trace.buffers.find(({ id }) => id === "stator")!;
+      const { levels } = trace.buffers.find((one) => one.id === id)!;
       for (const { week: w, firstTick, nTicks } of trace.weeks) {
         const least = Math.min(...levels.subarray(firstTick, firstTick + nTicks));
         expect(least).toBe(lowest.lowest[replication * lowest.nWeeks + options.warmupWeeks + w]);
