@@ -3,7 +3,8 @@
 import { Scale, Shape } from "@visx/visx";
 import { useMediaQuery } from "@/lib/client/use-media-query";
 import { formatPercent } from "@/lib/format";
-import { labelled, spread, sweepStart } from "./sweep-chart";
+import { spread, sweepStart } from "./chart-labels";
+import { ShareGrid, ValueAxis } from "./share-axes";
 
 export type GridLine = { key: string; name: string; points: readonly { value: number; share: number }[] };
 
@@ -22,24 +23,14 @@ export function GridLines({ lines, showValue, label }: Props) {
   const from = sweepStart(Math.min(...points.map(({ share }) => share)));
   const x = Scale.scaleLinear<number>({ domain: [values[0], values[values.length - 1]], range: [46, width - margin] });
   const y = Scale.scaleLinear<number>({ domain: [from, 1], range: [height - 30, 10] });
-  const step = 1 - from > 0.5 ? 0.2 : 1 - from > 0.2 ? 0.1 : 0.05;
-  const grid = Array.from({ length: 30 }, (_, i) => 1 - i * step).filter((share) => share >= from - 1e-9);
   const order = [...lines].sort((a, b) => (b.points.at(-1)?.share ?? 0) - (a.points.at(-1)?.share ?? 0));
   const ends = spread(
     order.map(({ points: own }) => y(own.at(-1)?.share ?? from) + 4),
     height - 30,
   );
-  const named = labelled(values.map((value) => ({ at: x(value), width: 10 + showValue(value).length * 7 })));
   return (
     <svg viewBox={`0 0 ${width} ${height}`} width="100%" className="max-w-[860px]" role="img" aria-label={label}>
-      {grid.map((share) => (
-        <g key={share}>
-          <path d={`M46 ${y(share)}H${width - margin}`} stroke="var(--rule)" />
-          <text x="40" y={y(share) + 4} textAnchor="end" className="axis-text">
-            {Math.round(share * 100)}
-          </text>
-        </g>
-      ))}
+      <ShareGrid from={from} y={y} left={46} right={width - margin} />
       {order.map(({ key, name, points: own }, i) => (
         <g key={key}>
           <Shape.LinePath
@@ -55,17 +46,7 @@ export function GridLines({ lines, showValue, label }: Props) {
           </text>
         </g>
       ))}
-      <path d={`M46 ${height - 30}H${width - margin}`} stroke="var(--ink)" strokeWidth="1.5" />
-      {values.map((value, i) => (
-        <g key={value}>
-          <path d={`M${x(value)} ${height - 30}v6`} stroke="var(--ink)" />
-          {named.has(i) && (
-            <text x={x(value)} y={height - 9} textAnchor="middle" className="axis-text">
-              {showValue(value)}
-            </text>
-          )}
-        </g>
-      ))}
+      <ValueAxis values={values} x={x} y={height - 30} left={46} right={width - margin} showValue={showValue} />
     </svg>
   );
 }

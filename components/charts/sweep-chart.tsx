@@ -5,6 +5,8 @@ import { formatCount, formatPercent, percentileName } from "@/lib/format";
 import { useMediaQuery } from "@/lib/client/use-media-query";
 import type { SweepRow } from "@/lib/schema/lines";
 import type { Figure } from "@/lib/simulation/types";
+import { spread, sweepStart } from "./chart-labels";
+import { ShareGrid, ValueAxis } from "./share-axes";
 
 type Props = {
   rows: readonly SweepRow[];
@@ -61,25 +63,15 @@ export function SweepChart({ rows, acceptedRisk, currentSize, restSize, showValu
       strong: false,
     },
   ].filter(({ key }, i, all) => key !== "p05" || all.findIndex((other) => other.name === "P5") === i);
-  const gridStep = 1 - from > 0.5 ? 0.2 : 1 - from > 0.2 ? 0.1 : 0.05;
-  const grid = Array.from({ length: 30 }, (_, i) => 1 - i * gridStep).filter((share) => share >= from - 1e-9);
   const label = `Fill rate by size: ${rows.map((row) => `${showValue(row.size)}: ${name} ${formatPercent(row.atRisk.value)}`).join("; ")}`;
   const ends = spread(
     series.map(({ of: read }) => y(read(rows[rows.length - 1]).value) + 4),
     height - 30,
   );
-  const named = labelled(rows.map(({ size }) => ({ at: x(size), width: 10 + showValue(size).length * 7 })));
   const isInside = (size: number) => size >= first && size <= last;
   return (
     <svg viewBox={`0 0 ${width} ${height}`} width="100%" className="max-w-[860px]" role="img" aria-label={label}>
-      {grid.map((share) => (
-        <g key={share}>
-          <path d={`M46 ${y(share)}H${width - margin}`} stroke="var(--rule)" />
-          <text x="40" y={y(share) + 4} textAnchor="end" className="axis-text">
-            {Math.round(share * 100)}
-          </text>
-        </g>
-      ))}
+      <ShareGrid from={from} y={y} left={46} right={width - margin} />
       {series.map(({ key, of: read, stroke, wash, dash, strong }, i) => (
         <g key={key}>
           <Shape.Area
@@ -122,41 +114,17 @@ export function SweepChart({ rows, acceptedRisk, currentSize, restSize, showValu
       {restSize !== null && isInside(restSize) && restSize !== currentSize && (
         <path d={`M${x(restSize)} 4V${height - 30}`} stroke="var(--ink)" strokeWidth="1.5" />
       )}
-      <path d={`M46 ${height - 30}H${width - margin}`} stroke="var(--ink)" strokeWidth="1.5" />
-      {rows.map((row, i) => (
-        <g key={row.size}>
-          <path d={`M${x(row.size)} ${height - 30}v6`} stroke="var(--ink)" />
-          {named.has(i) && (
-            <text x={x(row.size)} y={height - 9} textAnchor="middle" className="axis-text">
-              {showValue(row.size)}
-            </text>
-          )}
-        </g>
-      ))}
+      <ValueAxis
+        values={rows.map(({ size }) => size)}
+        x={x}
+        y={height - 30}
+        left={46}
+        right={width - margin}
+        showValue={showValue}
+      />
     </svg>
   );
 }
 
 const edge = (figure: Figure, sign: 1 | -1) => figure.value + sign * (figure.halfWidth ?? 0);
 const clamp = (share: number, from: number) => Math.min(1, Math.max(from, share));
-
-/** Lower end of the scale: a full twentieth, and never so high that nothing is left to read a value off. */
-export const sweepStart = (low: number) => Math.min(0.95, Math.max(0, Math.floor(low * 20 + 1e-9) / 20));
-
-/** Heights from the top, at least 15 px apart and none below `bottom`. */
-export function spread(wanted: readonly number[], bottom: number): number[] {
-  let last = -Infinity;
-  const apart = wanted.map((at) => (last = Math.max(at, last + 15)));
-  return apart.map((at, i) => Math.min(at, bottom - 15 * (apart.length - 1 - i)));
-}
-
-/** Which labels, from the left, have room beside those before them. */
-export function labelled(labels: readonly { at: number; width: number }[]): Set<number> {
-  let end = -Infinity;
-  const kept = labels.flatMap(({ at, width }, i) => {
-    if (at - width / 2 < end) return [];
-    end = at + width / 2;
-    return [i];
-  });
-  return new Set(kept);
-}

@@ -11,6 +11,7 @@ import { useMediaQuery } from "@/lib/client/use-media-query";
 import { useSimulation } from "@/lib/client/use-simulation";
 import { formatCount } from "@/lib/format";
 import { fanOf } from "./fan";
+import { Running } from "./running";
 
 type Drawn = { key: string; name: string; weeks: ReturnType<typeof fanOf> };
 
@@ -62,13 +63,7 @@ export function LowestStock({ reading }: { reading: Reading }) {
         />
       )}
       {state.status === "running" && (
-        <p role="status" className="py-4 text-ink-2">
-          Running {formatCount(Math.round(state.progress * options.replications))} of{" "}
-          {formatCount(options.replications)} replications{" "}
-          <Button size="small" kind="stop" onClick={cancel}>
-            Cancel
-          </Button>
-        </p>
+        <Running className="py-4" share={state.progress} replications={options.replications} onCancel={cancel} />
       )}
       {state.status === "failed" && (
         <ErrorLine className="py-2">The stock could not be worked out: {state.message}</ErrorLine>

@@ -1,6 +1,7 @@
 "use client";
 
 import { useMemo, useState } from "react";
+import { Running } from "@/components/readings/running";
 import { NeedChart } from "@/components/charts/need-chart";
 import { TakeOutFigures } from "@/components/charts/take-out-figures";
 import { Button } from "@/components/ui/button";
@@ -71,13 +72,7 @@ export function WeekNeeds() {
         </p>
       )}
       {state.status === "running" && (
-        <p role="status" className="mt-2 text-ink-2">
-          Running {formatCount(Math.round(state.progress * options.replications))} of{" "}
-          {formatCount(options.replications)} replications{" "}
-          <Button size="small" kind="stop" onClick={cancel}>
-            Cancel
-          </Button>
-        </p>
+        <Running className="mt-2" share={state.progress} replications={options.replications} onCancel={cancel} />
       )}
       {state.status === "failed" && (
         <ErrorLine className="mt-2">The needs could not be worked out: {state.message}</ErrorLine>

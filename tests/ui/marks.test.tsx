@@ -3,7 +3,7 @@ import { describe, expect, it, vi } from "vitest";
 import { DistributionChart } from "@/components/charts/distribution-chart";
 import { FillRateRuler, rulerStart } from "@/components/charts/fill-rate-ruler";
 import { StaffGauge, staffTop } from "@/components/charts/staff-gauge";
-import { labelled, spread, sweepStart } from "@/components/charts/sweep-chart";
+import { labelled, spread, sweepStart } from "@/components/charts/chart-labels";
 import { writeCsv } from "@/components/charts/take-out-figures";
 
 const levels = { p10: 20, p50: 40, p90: 70 };
