@@ -46,7 +46,6 @@ export default defineConfig([
     ".next/**",
     ".data/**",
     ".scratch*/**",
-    "public/worker/**",
     "coverage/**",
     "db/migrations/**",
     "test-results/**",
@@ -117,8 +116,6 @@ export default defineConfig([
     files: ["**/*.{ts,tsx}"],
     ignores: [
       "lib/env.ts",
-      // One address that the build writes in place.
-      "lib/client/worker-handle.ts",
       "*.config.ts",
       "tests/**",
       "instrumentation.ts",

@@ -9,16 +9,11 @@ export type WorkerHandle = {
   stop(): void;
 };
 
-/** Address of the worker that the production build bundled apart (see next.config.ts); set while building. */
-const bundled = process.env.SIMULATION_WORKER;
-
 export function startBrowserWorker(): WorkerHandle {
-  const worker = bundled
-    ? new Worker(bundled, { type: "module", name: "simulation" })
-    : new Worker(new URL("../../workers/simulation.worker.ts", import.meta.url), {
-        type: "module",
-        name: "simulation",
-      });
+  const worker = new Worker(new URL("../../workers/simulation.worker.ts", import.meta.url), {
+    type: "module",
+    name: "simulation",
+  });
   const api = wrap<SimulationApi>(worker);
   return {
     api,

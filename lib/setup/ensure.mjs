@@ -29,8 +29,6 @@ const buildInputs = [
   "proxy.ts",
   "tsconfig.json",
 ];
-/** Made by the build itself. */
-const built = path.join(root, "public/worker");
 const buildStamp = path.join(root, ".next/sources.sha256");
 
 /** Environment for child processes: telemetry off, and none of the variables that `npm run` hands down and that change a nested npm. */
@@ -106,7 +104,7 @@ export function ensureChromium() {
 }
 
 function hashInto(hash, place) {
-  if (!existsSync(place) || place === built) return;
+  if (!existsSync(place)) return;
   if (statSync(place).isDirectory()) {
     for (const name of readdirSync(place).sort()) hashInto(hash, path.join(place, name));
     return;
