@@ -1,7 +1,7 @@
 import { causeLabel } from "@/components/readings/cause-words";
 import { formatNumber, spreadText } from "@/lib/format";
 import type { Figure } from "@/lib/simulation/types";
-import type { Compared } from "./scenario-rows";
+import type { Compared } from "./compared";
 
 const mostRows = 6;
 

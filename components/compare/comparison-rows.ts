@@ -1,6 +1,6 @@
 import { percentileName } from "@/lib/format";
 import type { Figure } from "@/lib/simulation/types";
-import type { Compared } from "./scenario-rows";
+import type { Compared } from "./compared";
 
 type Cell = string | number | null;
 

@@ -11,20 +11,16 @@ import { Pick } from "@/components/ui/pick";
 import { Progress } from "@/components/ui/progress";
 import { describeError } from "@/lib/client/api";
 import { useLine } from "@/lib/client/line-state";
-import { areSameRun } from "@/lib/client/readings";
-import { type KeptRun, useKeptRuns } from "@/lib/client/use-kept-runs";
+import { useKeptRuns } from "@/lib/client/use-kept-runs";
 import { formatCount, percentileName, plural } from "@/lib/format";
-import { pairedDifferences, type PairedDifferences, percentile } from "@/lib/simulation";
-import type { Figure } from "@/lib/simulation/types";
+import { pairedDifferences, percentile } from "@/lib/simulation";
 import { CauseTable } from "./cause-table";
+import { type Compared, comparisonColumns } from "./compared";
 import { comparisonRows } from "./comparison-rows";
 import { ScenarioRow } from "./scenario-row";
 
 /** Scenarios on one scale at most. */
 export const mostCompared = 6;
-
-/** `atRisk`: the accepted risk's percentile, null without a run. */
-export type Compared = KeptRun & { letter: string; atRisk: Figure | null; differences: PairedDifferences | null };
 
 /** Scenarios of the line as kept, over the same weeks, each held against one of them. */
 export function ScenarioRows() {
@@ -37,13 +33,9 @@ export function ScenarioRows() {
     return wanted.slice(0, mostCompared);
   }, [line.scenarios, picked]);
   const baseSummary = chosen.find(({ id }) => id === baseId) ?? chosen.find(({ isBase }) => isBase) ?? chosen[0];
-  const [options, setOptions] = useState<KeptRun["detail"]["kept"]["options"] | null>(null);
-  const kept = useKeptRuns(chosen, options);
+  const kept = useKeptRuns(chosen, baseSummary?.id ?? null);
+  const { options } = kept;
   const base = kept.runs?.find(({ detail }) => detail.id === baseSummary?.id) ?? null;
-  // The base's own run settings are what all are compared on; known once its kept version is read.
-  const wanted = base?.detail.kept.options ?? null;
-  if (wanted && (!options || !areSameRun(wanted, options) || wanted.acceptedRisk !== options.acceptedRisk))
-    setOptions(wanted);
   const acceptedRisk = options?.acceptedRisk ?? 0.1;
   const rows = useMemo(
     () =>
@@ -186,9 +178,6 @@ export function ScenarioRows() {
     </section>
   );
 }
-
-export const comparisonColumns =
-  "lg:grid-cols-[minmax(0,1.1fr)_minmax(0,1.25fr)_minmax(0,.85fr)_minmax(0,.7fr)_minmax(0,.7fr)]";
 
 function Head({ name, letter, currency, axis }: { name: string; letter: string; currency: string; axis: ReactNode }) {
   return (

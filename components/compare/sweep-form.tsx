@@ -4,22 +4,18 @@ import { useMemo, useState } from "react";
 import { Button } from "@/components/ui/button";
 import { ErrorLine } from "@/components/ui/error-line";
 import { NumberField } from "@/components/ui/number-field";
-import { Pick } from "@/components/ui/pick";
 import { SwitchTwo } from "@/components/ui/switch-two";
 import { TextField } from "@/components/ui/text-field";
 import { useLine } from "@/lib/client/line-state";
 import { formatCount, plural } from "@/lib/format";
 import type { Line } from "@/lib/line/types";
-import { type Quantity, quantitiesOf, readQuantity, variedNodes, withQuantity } from "@/lib/sizing/quantities";
+import { type Quantity, readQuantity, withQuantity } from "@/lib/sizing/quantities";
 import { factorOf, listRange, mostRuns, mostSeconds, readSizes, suggestRange } from "@/lib/sizing/sweep";
+import { type Chosen, chooseQuantity, otherThan, QuantityPicks, wholeLine } from "./quantity-picks";
 import { useSweep, type Varied } from "./sweep-store";
 import { kindOf, showBare } from "./sweep-values";
 
 type Range = { from: number | null; to: number | null; step: number | null };
-type Chosen = { node: string | null; path: string };
-
-const wholeLine = "whole line";
-
 /** Which number, and which values of it; a second one beside it if wanted. */
 export function SweepForm() {
   const { parsed, digest, options, selection } = useLine();
@@ -32,15 +28,19 @@ export function SweepForm() {
   const [isTried, setTried] = useState(false);
   const first = useMemo(() => parsed && chooseQuantity(parsed, wanted), [parsed, wanted]);
   const other = useMemo(() => parsed && second && chooseQuantity(parsed, second), [parsed, second]);
-  if (!parsed || !digest || !first)
+  const asked = useMemo(() => {
+    if (!parsed || !first) return null;
+    const kind = kindOf(first);
+    const range = typed[keyOf(first)] ?? suggestRange(readQuantity(parsed, first), kind);
+    const read = way === "range" ? listRange(range.from, range.to, range.step, kind) : readSizes(list, kind);
+    const besides = second && other ? readSizes(second.text, kindOf(other), mostSeconds) : null;
+    return { range, read, besides, refusal: findRefusal(parsed, first, read, other, besides) };
+  }, [first, list, other, parsed, second, typed, way]);
+  if (!parsed || !digest || !first || !asked)
     return <p className="text-ink-2">The line has faults and cannot run, so nothing can be compared yet.</p>;
+  const { range, read, besides, refusal } = asked;
   const kind = kindOf(first);
-  const factor = factorOf(first);
-  const key = `${first.node ?? wholeLine} ${first.path}`;
-  const range = typed[key] ?? suggestRange(readQuantity(parsed, first), kind);
-  const read = way === "range" ? listRange(range.from, range.to, range.step, kind) : readSizes(list, kind);
-  const besides = second && other ? readSizes(second.text, kindOf(other), mostSeconds) : null;
-  const refusal = findRefusal(parsed, first, read, other, besides);
+  const key = keyOf(first);
   const nRuns = ("sizes" in read ? read.sizes.length : 0) * (besides && "sizes" in besides ? besides.sizes.length : 1);
   const set = (change: Partial<Range>) => setTyped({ ...typed, [key]: { ...range, ...change } });
   const isSize = first.path === "size";
@@ -79,7 +79,7 @@ export function SweepForm() {
               className="w-28"
               label={{ from: "From", to: "To", step: "Step" }[field]}
               unit={first.unit}
-              factor={factor}
+              factor={factorOf(first)}
               isWhole={kind.isWhole}
               value={range[field]}
               onChange={(value) => set({ [field]: value })}
@@ -136,54 +136,7 @@ export function SweepForm() {
   );
 }
 
-function QuantityPicks({
-  line,
-  chosen,
-  onChoose,
-  label,
-}: {
-  line: Line;
-  chosen: Quantity;
-  onChoose(chosen: Chosen): void;
-  label: string;
-}) {
-  const nodes = variedNodes(line).filter(({ id }) => quantitiesOf(line, id).length > 0);
-  const quantities = quantitiesOf(line, chosen.node);
-  return (
-    <>
-      <Pick
-        label={label}
-        value={chosen.node ?? wholeLine}
-        options={nodes.map(({ id, name }) => ({ value: id ?? wholeLine, label: name, hint: kindName(line, id) }))}
-        onChange={(id) => onChoose({ node: id === wholeLine ? null : id, path: "" })}
-      />
-      <Pick
-        label="the"
-        value={chosen.path}
-        options={quantities.map(({ path, name }) => ({ value: path, label: name }))}
-        onChange={(path) => onChoose({ node: chosen.node, path })}
-      />
-    </>
-  );
-}
-
-const kindName = (line: Line, id: string | null) => line.nodes.find((node) => node.id === id)?.kind ?? "";
-
-/** The quantity asked for, or the first of its node; without a node that is there, the size of the first buffer. */
-function chooseQuantity(line: Line, chosen: Chosen | null): Quantity | null {
-  if (chosen) {
-    const own = quantitiesOf(line, chosen.node);
-    const found = own.find(({ path }) => path === chosen.path) ?? own.find(({ path }) => path === "size") ?? own[0];
-    if (found) return found;
-  }
-  const [first] = variedNodes(line).filter(({ id }) => quantitiesOf(line, id).length > 0);
-  return first ? (quantitiesOf(line, first.id)[0] ?? null) : null;
-}
-
-/** What to vary beside a quantity at first: all demand, or the first buffer where that is varied already. */
-function otherThan(line: Line, { node }: Quantity): Chosen {
-  return node === null ? { node: variedNodes(line)[0].id, path: "" } : { node: null, path: "" };
-}
+const keyOf = ({ node, path }: Quantity) => `${node ?? wholeLine} ${path}`;
 
 function exampleOf(line: Line, quantity: Quantity): string {
   const { from, to, step } = suggestRange(readQuantity(line, quantity), kindOf(quantity));

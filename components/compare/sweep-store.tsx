@@ -105,21 +105,8 @@ export function countAsked({ first, second }: Pick<SweepRun, "first" | "second">
   return first.values.length * (second?.values.length ?? 1);
 }
 
-type KnownRow = { before: RunResult | null; acceptedRisk: number; row: SweepRow };
-
-/** Percentiles sort all weeks: worked out once, since a running sweep is shown many times a second. */
-const knownRows = new WeakMap<RunResult, KnownRow>();
-
 /** The figures of one value that tables, charts and links show. */
 export function toRow(size: number, result: RunResult, before: RunResult | null, acceptedRisk: number): SweepRow {
-  const known = knownRows.get(result);
-  if (known && known.before === before && known.acceptedRisk === acceptedRisk) return known.row;
-  const row = readRow(size, result, before, acceptedRisk);
-  knownRows.set(result, { before, acceptedRisk, row });
-  return row;
-}
-
-function readRow(size: number, result: RunResult, before: RunResult | null, acceptedRisk: number): SweepRow {
   const { p05, p10, p50, risk, moneyTiedUp, costPerYear } = result.summary;
   return {
     size,
@@ -134,18 +121,17 @@ function readRow(size: number, result: RunResult, before: RunResult | null, acce
   };
 }
 
-/** A sweep of the first quantity as it goes into a link; with two, at one value of the second. */
-export function toSweep({ first, readings }: SweepRun, acceptedRisk: number, beside: number | null = null): Sweep {
+/** A sweep of one quantity as it goes into a link. */
+export function toSweep({ first, readings }: SweepRun, acceptedRisk: number): Sweep {
   const { quantity, nodeName, now } = first;
-  const own = readings.filter((one) => one.beside === beside);
   return {
     bufferId: quantity.node ?? "line",
     bufferName: nodeName,
     ...(quantity.path === "size" ? {} : { quantity: quantity.name }),
     unit: quantity.unit,
     currentSize: now,
-    rows: own.map(({ value, reading }, i) =>
-      toRow(value, reading.result, own[i - 1]?.reading.result ?? null, acceptedRisk),
+    rows: readings.map(({ value, reading }, i) =>
+      toRow(value, reading.result, readings[i - 1]?.reading.result ?? null, acceptedRisk),
     ),
   };
 }

@@ -5,7 +5,7 @@ import { factorOf, sizeKind, type ValueKind } from "@/lib/sizing/sweep";
 
 /** The kind of a quantity's values; a buffer's size has rules of its own. */
 export function kindOf({ path, isWhole, unit }: Quantity): ValueKind {
-  return path === "size" ? sizeKind : { isWhole, unit };
+  return path === "size" ? sizeKind : { isWhole, unit, least: isWhole ? 0 : -Infinity, word: "value" };
 }
 
 /** A value with its unit, as tables and sentences show it: "3 900", "2.5 %", "25 days". */

@@ -1,5 +1,4 @@
 import type { LineState, Reading } from "@/lib/client/line-state";
-import { moveFigure } from "@/lib/client/paired";
 import { totalWeeks } from "@/lib/client/run-size";
 import type { ReadingSummary } from "@/lib/schema/lines";
 import { pairedDifference } from "@/lib/simulation/paired";
@@ -86,4 +85,13 @@ function figuresOfSummary({
   weeks,
 }: ReadingSummary): StripFigures {
   return { acceptedRisk, atRisk, p05, p50, moneyTiedUp, costPerYear, weeks };
+}
+
+/** A settled figure moved by a difference; both are off independently. */
+export function moveFigure(settled: Figure, difference: Figure): Figure {
+  const halfWidths = [settled.halfWidth ?? 0, difference.halfWidth ?? 0];
+  return {
+    value: Math.min(1, Math.max(0, settled.value + difference.value)),
+    halfWidth: difference.halfWidth === null ? null : Math.hypot(...halfWidths),
+  };
 }

@@ -4,10 +4,9 @@ import { useMemo } from "react";
 import { TakeOutFigures } from "@/components/charts/take-out-figures";
 import type { SizingSearch } from "@/lib/client/use-sizing";
 import { formatChosenPercent, formatCount, formatNumber, formatShare, withSign } from "@/lib/format";
-import type { Line } from "@/lib/line/types";
 import type { FrontierPoint } from "@/lib/sizing";
-import { estimateSerialParts, leanShare, serialAssumptions } from "@/lib/sizing/serial-estimate";
 import { averageSizes, differencesFrom, textbookAssumptions, textbookSizes } from "@/lib/sizing/textbook";
+import { SerialParts } from "./serial-parts";
 
 /** The textbook's safety stock and the plan on averages beside what the simulation finds, and why they differ. */
 export function FormulaTable({ search, point }: { search: SizingSearch; point: FrontierPoint | null }) {
@@ -184,47 +183,5 @@ function Risk({ result }: { result: NonNullable<SizingSearch["textbook"]>["resul
     <>
       <b className="font-[640]">{value}</b> {spread}
     </>
-  );
-}
-
-/** Serial parts of the line with the Bernoulli estimate, or why it does not apply. */
-function SerialParts({ line }: { line: Line }) {
-  const parts = useMemo(() => estimateSerialParts(line), [line]);
-  const nameOf = (id: string) => line.nodes.find((node) => node.id === id)?.name ?? id;
-  if (parts.length === 0) return null;
-  return (
-    <section className="mt-4">
-      <h3 className="figure-title">Serial parts by the Bernoulli line</h3>
-      <ul className="mt-1 max-w-[90ch] space-y-1">
-        {parts.map(({ stations, buffers, estimate }) => (
-          <li key={buffers.join()}>
-            {stations.map(nameOf).join(estimate.applies ? " → " : ", ")} over {buffers.map(nameOf).join(", ")}:{" "}
-            {estimate.applies ? (
-              <>
-                about {formatNumber(estimate.perHour, 1)} good units an hour with the sizes as they are,{" "}
-                {formatNumber(estimate.perHourEndless, 1)} with endless room; {formatChosenPercent(leanShare)} of that
-                takes{" "}
-                {estimate.lean
-                  .map(({ id, size, lean }) => `${nameOf(id)} ${formatCount(lean)} (now ${formatCount(size)})`)
-                  .join(", ")}
-                .
-              </>
-            ) : (
-              <span className="text-ink-2">no estimate, since {estimate.reason}.</span>
-            )}
-          </li>
-        ))}
-      </ul>
-      {parts.some(({ estimate }) => estimate.applies) && (
-        <details className="mt-1 text-s text-ink-2">
-          <summary className="cursor-pointer text-water-700">What the estimate takes for granted</summary>
-          <ul className="mt-1 list-disc pl-5">
-            {serialAssumptions.map((text) => (
-              <li key={text}>{text}</li>
-            ))}
-          </ul>
-        </details>
-      )}
-    </section>
   );
 }

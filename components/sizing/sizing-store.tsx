@@ -15,8 +15,9 @@ import {
 import { useSimulation } from "@/lib/client/use-simulation";
 import type { Line } from "@/lib/line/types";
 import type { RunOptions } from "@/lib/simulation/types";
-import { type Checkpoint, findSizes, type FrontierPoint, refuseRange, suggestBounds, withSizes } from "@/lib/sizing";
+import { type Checkpoint, findSizes, type FrontierPoint, suggestBounds, withSizes } from "@/lib/sizing";
 import { averageSizes, textbookSizes } from "@/lib/sizing/textbook";
+import { asksSame, refuseQuestion } from "./question-rules";
 
 /** Keeps the search for sizes while one moves between the views of a line. */
 export function SizingProvider({ children }: { children: ReactNode }) {
@@ -45,7 +46,7 @@ export function SizingProvider({ children }: { children: ReactNode }) {
     };
   }, [change, options.acceptedRisk, options.targetFillRate, parsed]);
 
-  const refusal = refuse(question, parsed);
+  const refusal = refuseQuestion(question, parsed);
   const own = search?.scenarioId === scenario.id ? search : null;
   const isStale = own !== null && (own.digest !== digest || !asksSame(own, question));
 
@@ -210,34 +211,4 @@ async function runOthers(
 
 function sizesToday(line: Line): Record<string, number> {
   return Object.fromEntries(line.nodes.flatMap((node) => (node.kind === "buffer" ? [[node.id, node.size]] : [])));
-}
-
-function refuse({ ranges }: SizingQuestion, line: Line | null): string | null {
-  if (!line) return "The line has faults and cannot run, so no sizes can be searched for yet.";
-  const free = ranges.filter(({ isFixed }) => !isFixed);
-  if (free.length === 0) return "All sizes are held fixed. Let at least one change.";
-  for (const range of free) {
-    const fault = refuseRange(range);
-    const name = line.nodes.find(({ id }) => id === range.id)?.name ?? range.id;
-    if (fault) return `${name}: ${fault}`;
-  }
-  return null;
-}
-
-/** The accepted risk only chooses a point of the frontier, as long as it is one of them. */
-function asksSame(
-  { problem }: SizingSearch,
-  { targetFillRate, objective, ranges, acceptedRisk }: SizingQuestion,
-): boolean {
-  const free = ranges.filter(({ isFixed }) => !isFixed);
-  return (
-    problem.targetFillRate === targetFillRate &&
-    problem.objective === objective &&
-    problem.acceptedRisks.some((risk) => Math.abs(risk - acceptedRisk) < 1e-9) &&
-    problem.buffers.length === free.length &&
-    problem.buffers.every(({ id, min, max, step }, i) => {
-      const range = free[i];
-      return range.id === id && range.min === min && range.max === max && range.step === step;
-    })
-  );
 }

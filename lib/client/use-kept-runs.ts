@@ -27,9 +27,9 @@ export type KeptRun = {
 /**
  * Kept versions of some scenarios with their runs.
  * @param chosen - In the order they are shown.
- * @param options - Of the runs that are comparable; runs of other weeks count as missing.
+ * @param baseId - The one whose run settings all are compared on; runs of other weeks count as missing.
  */
-export function useKeptRuns(chosen: readonly ScenarioSummary[], options: ScenarioOptions | null) {
+export function useKeptRuns(chosen: readonly ScenarioSummary[], baseId: string | null) {
   const client = useSimulation();
   // Kept versions change only with a new one: their number is part of the key.
   const key = ["kept", ...chosen.map(({ id, nVersions }) => `${id}:${nVersions}`)];
@@ -38,6 +38,8 @@ export function useKeptRuns(chosen: readonly ScenarioSummary[], options: Scenari
     () => Promise.all(chosen.map(({ id }) => fetchJson<ScenarioDetail>(scenarioKey(id)))),
     { keepPreviousData: true },
   );
+  /** Known once the base's kept version is read. */
+  const options = details.data?.find(({ id }) => id === baseId)?.kept.options ?? null;
   const resultIds = details.data?.flatMap(({ kept }) => (kept.reading ? [kept.reading.resultId] : [])) ?? [];
   const stored = useSWRImmutable<Map<string, RunResult>, Error>(
     resultIds.length > 0 ? ["kept results", ...resultIds] : null,
@@ -60,7 +62,7 @@ export function useKeptRuns(chosen: readonly ScenarioSummary[], options: Scenari
       const { kept } = detail;
       const parsed = parseLine(kept.document);
       const line = "line" in parsed ? parsed.line : null;
-      const fits = options === null || areSameRun(kept.options, options);
+      const fits = options !== null && areSameRun(kept.options, options);
       const read = fits && kept.reading ? (stored.data?.get(kept.reading.resultId) ?? null) : null;
       const ran = options ? (own.get(keyOf(kept.id, options)) ?? null) : null;
       return [{ detail, line, result: read ?? ran, isOwn: read === null && ran !== null }];
@@ -86,6 +88,7 @@ export function useKeptRuns(chosen: readonly ScenarioSummary[], options: Scenari
 
   return {
     runs,
+    options,
     isReading: (details.isLoading && !details.data) || (stored.isLoading && !stored.data),
     error: details.error ?? stored.error ?? null,
     runMissing,

@@ -1,4 +1,4 @@
-import type { Levels } from "./problem";
+import type { Levels, Place } from "./problem";
 import { lowShares, type Reading, type Search } from "./runs";
 
 /** Shares of their range at which buffers between stations are tried. */
@@ -21,9 +21,10 @@ const dearness = 10;
  */
 export async function findFirstSet(search: Search, ample: Reading, accepted: number): Promise<Reading> {
   const { problem, runs, places, tops, whole, few } = search;
-  const has = (place: string) => places.includes(place as never);
-  /** What is halved: the stock customers draw on, else the stock between stations. */
-  const halved = has("last") ? "last" : "between";
+  const has = (place: Place) => places.includes(place);
+  // The stock customers draw on is halved, else the stock between stations; purchased stock alone is looked at once.
+  const halved: Place = has("last") ? "last" : "between";
+  const nRounds = has(halved) ? nHalvings : 1;
   const between = has("between") && halved === "last" ? betweenShares : [1];
   const bought = has("bought") ? lowShares.map((_, i) => i).slice(0, nLowShares) : [0];
   const starts = between.flatMap((share) => bought.map((low) => ({ share, low })));
@@ -34,30 +35,18 @@ export async function findFirstSet(search: Search, ample: Reading, accepted: num
     });
   const ranges = starts.map(() => ({ low: 0, high: 1 }));
   const found: (Reading | null)[] = starts.map(() => null);
-  const note = (reading: Reading, i: number) => {
-    const best = found[i];
-    if (reading.risk <= accepted && (!best || reading.value < best.value)) found[i] = reading;
-  };
-  if (!has("last") && !has("between")) {
-    (
-      await runs.read(
-        starts.map((start) => setAt(start, 1)),
-        few,
-      )
-    ).forEach(note);
-  } else {
-    for (let round = 0; round < nHalvings; round++) {
-      const middles = ranges.map(({ low, high }) => (low + high) / 2);
-      const readings = await runs.read(
-        starts.map((start, i) => setAt(start, middles[i])),
-        few,
-      );
-      readings.forEach((reading, i) => {
-        if (reading.risk <= accepted) ranges[i].high = middles[i];
-        else ranges[i].low = middles[i];
-        note(reading, i);
-      });
-    }
+  for (let round = 0; round < nRounds; round++) {
+    const middles = ranges.map(({ low, high }) => (low + high) / 2);
+    const sets = starts.map((start, i) => setAt(start, middles[i]));
+    (await runs.read(sets, few)).forEach((reading, i) => {
+      if (reading.risk > accepted) {
+        ranges[i].low = middles[i];
+        return;
+      }
+      ranges[i].high = middles[i];
+      const best = found[i];
+      if (!best || reading.value < best.value) found[i] = reading;
+    });
   }
   const finalists = found
     .flatMap((reading) => (reading ? [reading] : []))

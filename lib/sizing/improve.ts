@@ -37,7 +37,7 @@ export function beginKnowledge({ problem, places, tops }: Search, ample: Reading
 }
 
 /**
- * Improves a set of sizes: looks at each buffer a step down over a part of the weeks, fits a curve of risk to each, sets
+ * Improves a set of sizes: looks at each buffer a step down or, every other time, up over a part of the weeks, fits a curve of risk to each, sets
  * all of them at once so that marginal risk for money is alike, and runs the set over all weeks; so again from there.
  * @param accepted - Share of weeks that may be bad.
  * @param mostEffort - Runs of all replications after which no further look round is begun.
@@ -81,7 +81,7 @@ export async function improveSizes(
   return findBest();
 }
 
-/** Runs each buffer a step down (up from its least), and says what is known of all of them then. */
+/** Runs each buffer a step to one side (down from its top, up from its least), and says what is known of all then. */
 async function lookRound(
   { problem, runs, tops }: Search,
   at: Reading,
@@ -92,7 +92,7 @@ async function lookRound(
 ): Promise<{ choices: Choice[]; from: Reading }> {
   const steps = tops.map((_, b) => {
     const level = at.levels[b];
-    const curve = seen[b].length > 0 ? fitSeen(seen[b], likely[b]) : curveThrough(level, unknownShare, likely[b]);
+    const curve = curveOf(seen[b], likely[b], level);
     const { min, step } = problem.buffers[b];
     const wanted = Math.log1p((wantedChange * trust) / shareAt(curve, level)) / curve.k;
     return Math.max(1, Math.round(Math.min(wanted, mostMoved * trust * (level + min / step))));
@@ -111,9 +111,9 @@ async function lookRound(
     costs[b] = (moved[i].value - from.value) / (moved[i].levels[b] - from.levels[b]);
   });
   const choices = tops.map((top, b): Choice => {
-    const curve = seen[b].length > 0 ? fitSeen(seen[b], likely[b]) : curveThrough(0, unknownShare, likely[b]);
     const level = at.levels[b];
-    // Down no further than was looked at: what lies beyond may fall off a cliff that the curve does not know.
+    const curve = curveOf(seen[b], likely[b], level);
+    // Down no further than a look goes: what lies beyond may fall off a cliff that the curve does not know.
     const lowest = Math.max(0, level - steps[b]);
     const reach = Math.min(2 * steps[b], Math.max(steps[b], Math.round(trust / curve.k)));
     return { curve, cost: costs[b], from: level, lowest, highest: Math.min(top, level + reach) };
@@ -121,7 +121,9 @@ async function lookRound(
   return { choices, from };
 }
 
-function fitSeen(seen: Knowledge["seen"][number], likely: number): Curve {
+/** Of one buffer: fitted to what was seen of it, the less the older; a guess at its level before anything was. */
+function curveOf(seen: Knowledge["seen"][number], likely: number, level: number): Curve {
+  if (seen.length === 0) return curveThrough(level, unknownShare, likely);
   const weighed = seen.map(({ age, ...observation }) => {
     const doubt = doubts[Math.min(age, doubts.length - 1)] * observation.change;
     return { ...observation, variance: observation.variance + doubt * doubt };

@@ -7,8 +7,11 @@ export const mostSizes = 24;
 export const mostSeconds = 6;
 export const mostRuns = 48;
 
-/** What values of a quantity have to be, apart from what its line allows. */
-export type ValueKind = { isWhole: boolean; unit: string };
+/** What values of a quantity have to be, apart from what its line allows, and what one of them is called. */
+export type ValueKind = { isWhole: boolean; unit: string; least: number; word: "size" | "value" };
+
+/** The size of a buffer. */
+export const sizeKind: ValueKind = { isWhole: true, unit: "units", least: 1, word: "size" };
 
 /** Shares are shown and typed in per cent. */
 export const factorOf = ({ unit }: Pick<ValueKind, "unit">): number => (unit === "%" ? 100 : 1);
@@ -27,13 +30,13 @@ export function listRange(
 ): Listed {
   if (from === null || to === null || step === null)
     return { refusal: "Type where the range begins, where it ends and the step." };
-  if (kind === sizeKind ? ![from, to, step].every(isSize) : ![from, to, step].every((value) => fits(value, kind)))
+  if (![from, to].every((value) => fits(value, kind)) || (kind.isWhole && !Number.isInteger(step)))
     return { refusal: ruleOf(kind) };
   if (!(step > 0)) return { refusal: "The step has to be above 0." };
   if (to < from) return { refusal: "The range has to end at or above where it begins." };
   const n = Math.floor((to - from) / step + 1e-9) + 1;
   if (n > mostSizes)
-    return { refusal: `${sayCount(n)} ${wordOf(kind)} are too many: at most ${mostSizes}. Use a larger step.` };
+    return { refusal: `${sayCount(n)} ${kind.word}s are too many: at most ${mostSizes}. Use a larger step.` };
   const sizes = Array.from({ length: n }, (_, i) => tidy(from + i * step));
   if (sizes[n - 1] < to && n < mostSizes) sizes.push(to);
   return { sizes };
@@ -48,34 +51,30 @@ export function readSizes(text: string, kind: ValueKind = sizeKind, most = mostS
     .replaceAll("%", " ")
     .split(/[\s,;]+/)
     .filter(Boolean);
-  const word = wordOf(kind);
-  if (parts.length === 0) return { refusal: `Type at least one ${word.slice(0, -1)}.` };
+  if (parts.length === 0) return { refusal: `Type at least one ${kind.word}.` };
   const typed = parts.map((part) => tidy(Number(part) / factorOf(kind)));
   const sizes = [...new Set(typed)].sort((a, b) => a - b);
-  if (!sizes.every((value) => (kind === sizeKind ? isSize(value) : fits(value, kind))))
-    return { refusal: ruleOf(kind) };
-  if (sizes.length > most) return { refusal: `${sayCount(sizes.length)} ${word} are too many: at most ${most}.` };
+  if (!sizes.every((value) => fits(value, kind))) return { refusal: ruleOf(kind) };
+  if (sizes.length > most) return { refusal: `${sayCount(sizes.length)} ${kind.word}s are too many: at most ${most}.` };
   return { sizes };
 }
 
-/** The size of a buffer. */
-export const sizeKind: ValueKind = { isWhole: true, unit: "units" };
-const isSize = (value: number) => Number.isInteger(value) && value >= 1 && value < limits.count;
-const fits = (value: number, { isWhole }: ValueKind) => (isWhole ? Number.isInteger(value) : Number.isFinite(value));
-const wordOf = (kind: ValueKind) => (kind === sizeKind ? "sizes" : "values");
+function fits(value: number, { isWhole, least }: ValueKind): boolean {
+  return Number.isFinite(value) && value >= least && (!isWhole || (Number.isInteger(value) && value < limits.count));
+}
+
 const tidy = (value: number) => Number(value.toPrecision(12));
 
-function ruleOf(kind: ValueKind): string {
-  if (kind === sizeKind) return `Sizes are whole numbers, 1 or more and below ${sayCount(limits.count)}.`;
-  return kind.isWhole
-    ? "Values are whole numbers, parted by commas or spaces."
-    : "Values are numbers, parted by commas or spaces, with a decimal point.";
+function ruleOf({ isWhole, least, word }: ValueKind): string {
+  const what = word === "size" ? "Sizes" : "Values";
+  if (!isWhole) return `${what} are numbers, with a decimal point.`;
+  return `${what} are whole numbers, ${least} or more and below ${sayCount(limits.count)}.`;
 }
 
 /** A range around a value: four round steps of about a tenth of it to either side; shares stay shares. */
 export function suggestRange(value: number, kind: ValueKind = sizeKind): { from: number; to: number; step: number } {
   if (kind.isWhole) {
-    const least = kind === sizeKind ? 1 : 0;
+    const { least } = kind;
     const step = nearestRound(Math.max(1, value / 10));
     const from = Math.max(least, value - Math.min(4, Math.floor((value - least) / step)) * step);
     return { from, to: value + 4 * step, step };

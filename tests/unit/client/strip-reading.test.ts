@@ -1,8 +1,7 @@
 import { describe, expect, it } from "vitest";
-import { readStrip } from "@/components/line/strip-reading";
+import { moveFigure, readStrip } from "@/components/line/strip-reading";
 import { describePoints, describeTime, sayFigures } from "@/components/line/strip-text";
 import type { LineState, Reading } from "@/lib/client/line-state";
-import { moveFigure } from "@/lib/client/paired";
 import example from "@/lib/line/example.json";
 import type { Line } from "@/lib/line/types";
 import { defaultOptions, type ReadingSummary } from "@/lib/schema/lines";

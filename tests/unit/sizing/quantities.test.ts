@@ -82,11 +82,12 @@ describe("ranges of values", () => {
 
   it("keeps to the rules of sizes for sizes", () => {
     expect(listRange(1.5, 3, 1)).toEqual({ refusal: expect.stringMatching(/^Sizes are whole/) });
-    expect(listRange(5, 3, 1, { isWhole: false, unit: "days" })).toEqual({
+    const days = kindOf(find("sup-lam", "leadTimeDays"));
+    expect(listRange(5, 3, 1, days)).toEqual({
       refusal: expect.stringMatching(/end at or above/),
     });
-    expect(listRange(0, 3, 0, { isWhole: false, unit: "days" })).toEqual({ refusal: expect.stringMatching(/above 0/) });
-    expect(listRange(0, 1, 0.01, { isWhole: false, unit: "%" })).toEqual({
+    expect(listRange(0, 3, 0, days)).toEqual({ refusal: expect.stringMatching(/above 0/) });
+    expect(listRange(0, 1, 0.01, kindOf(find("wind", "scrapRate")))).toEqual({
       refusal: expect.stringMatching(/too many/),
     });
   });
