@@ -22,6 +22,7 @@ const height = 360;
 const top = 16;
 const bottom = 44;
 const left = 64;
+const labelWidth = 170;
 
 /** Money against accepted risk as a terrace: a tread is the cheapest set found for a risk, a riser the price of the step. */
 export function Terrace({ treads, chosen, marks, currency, what, onChoose }: Props) {
@@ -98,14 +99,7 @@ export function Terrace({ treads, chosen, marks, currency, what, onChoose }: Pro
           </g>
         ))}
         {marks.map((mark) => (
-          <Mark
-            key={mark.label}
-            mark={mark}
-            x={placeRisk(mark.risk)}
-            y={y(mark.money)}
-            width={width}
-            currency={currency}
-          />
+          <Mark key={mark.label} mark={mark} x={placeRisk(mark.risk)} y={y(mark.money)} currency={currency} />
         ))}
         {treads.map(({ risk, money }, i) => (
           <rect
@@ -174,20 +168,9 @@ function Step({ x, band, y, bottom: ground, isChosen, isReached, money }: StepPr
   );
 }
 
-function Mark({
-  mark,
-  x,
-  y,
-  width,
-  currency,
-}: {
-  mark: TerraceMark;
-  x: number;
-  y: number;
-  width: number;
-  currency: string;
-}) {
-  const isRight = width - x > x - left;
+function Mark({ mark, x, y, currency }: { mark: TerraceMark; x: number; y: number; currency: string }) {
+  // The terrace rises to the right: to the left of a mark above it there is room, but for the axis.
+  const isRight = mark.shape === "cross" || x - left < labelWidth;
   const at = isRight ? x + 11 : x - 11;
   const anchor = isRight ? "start" : "end";
   return (

@@ -32,8 +32,8 @@ export function RangesDialog({ isOpen, onClose }: { isOpen: boolean; onClose(): 
           const fault = range.isFixed ? null : refuseRange(range);
           return (
             <li key={range.id} className="border-b border-rule py-2">
-              <div className="grid items-end gap-x-3 gap-y-1 sm:grid-cols-[minmax(0,1fr)_repeat(3,7rem)]">
-                <label className="flex min-h-8 items-center gap-2">
+              <div className="grid grid-cols-3 items-end gap-x-3 gap-y-1 sm:grid-cols-[minmax(0,1fr)_repeat(3,7rem)]">
+                <label className="col-span-3 flex min-h-8 items-center gap-2 sm:col-span-1">
                   <input
                     type="checkbox"
                     className="size-4 accent-ink"

@@ -64,6 +64,20 @@ describe("createSimulationClient", () => {
     expect(await createClient(createFakeCrew()).runMany([], options)).toEqual([]);
   });
 
+  it("keeps the order of many lines when they finish out of order", async () => {
+    const crew = createFakeCrew((api, nth) => ({
+      ...api,
+      async simulate(part: RunOptions) {
+        if (nth === 0) await pause(60);
+        return api.simulate(part);
+      },
+    }));
+    const lines = [600, 1800].map((size) => withSize(line, "lam", size));
+    const results = await createClient(crew).runMany(lines, options);
+    expect(results).toEqual(lines.map((one) => simulate(one, options)));
+    expect(results[0]).not.toEqual(results[1]);
+  });
+
   it("fails all of many lines where one cannot run, and ends them when cancelled", async () => {
     const broken = { ...line, nodes: line.nodes.filter(({ kind }) => kind !== "customer") };
     await expect(createClient(createFakeCrew()).runMany([line, broken, line], options)).rejects.toThrow();

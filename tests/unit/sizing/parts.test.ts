@@ -104,6 +104,16 @@ describe("chooseLevels", () => {
     expect(price).toBeGreaterThan(0);
   });
 
+  it("puts each buffer where it costs least at the price, whatever the room", () => {
+    for (let room = -0.04; room < 0.06; room += 0.002) {
+      const { levels, price } = chooseLevels(choices, room);
+      choices.forEach((choice, i) => {
+        const merit = (level: number) => choice.cost * level + price * shareAt(choice.curve, level);
+        expect(merit(levels[i])).toBeCloseTo(Math.min(...range(choice).map(merit)), 6);
+      });
+    }
+  });
+
   it("goes to the levels of least risk where there is not room enough, and down to the lowest where there is plenty", () => {
     expect(chooseLevels(choices, -1).levels).toEqual([16, 14, 9]);
     expect(chooseLevels(choices, 1).levels).toEqual([4, 2, 1]);
